@@ -1,0 +1,191 @@
+"""The contour in pieces: sections of segments, cylinders and cones between grid stations, their Gauss points."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+from functools import cached_property
+
+import numpy as np
+from numpy.typing import NDArray
+
+from fe_shaft.fem.section import area, cowper
+
+Array = NDArray[np.float64]
+Ints = NDArray[np.intp]
+
+#: A cone is cut until its diameters differ by no more than this ratio; eight Gauss points are then exact to rounding.
+CONE_RATIO = 1.2
+GAUSS_CYLINDER = np.polynomial.legendre.leggauss(2)
+GAUSS_CONE = np.polynomial.legendre.leggauss(8)
+
+
+@dataclass(frozen=True)
+class Sections:
+    """Segments of all shafts, one after the other, (n,) each.
+
+    Attributes
+    ----------
+    diameter_left, diameter_right, bore_left, bore_right : [m]
+    youngs_modulus, shear_modulus : [Pa]
+    poisson_ratio, density : [-], [kg/m^3]
+    shear_coefficient : [-]
+        NaN: Cowper's of the section; infinite: no shear deformation.
+    """
+
+    diameter_left: Array
+    diameter_right: Array
+    bore_left: Array
+    bore_right: Array
+    youngs_modulus: Array
+    shear_modulus: Array
+    poisson_ratio: Array
+    density: Array
+    shear_coefficient: Array
+
+    @cached_property
+    def tapered(self) -> bool:
+        """Whether any segment is a cone."""
+        return not (
+            np.array_equal(self.diameter_left, self.diameter_right) and np.array_equal(self.bore_left, self.bore_right)
+        )
+
+    @cached_property
+    def flexibility_rates(self) -> Array:
+        """Axial, torsional, shear and bending flexibility per length at the left ends, (4, n)."""
+        return _rates(
+            self.diameter_left,
+            self.bore_left,
+            self.youngs_modulus,
+            self.shear_modulus,
+            self.poisson_ratio,
+            self.shear_coefficient,
+        )
+
+
+def _rates(diameter: Array, bore: Array, e: Array, g: Array, nu: Array, kappa: Array) -> Array:
+    a = area(diameter, bore)
+    own = np.isnan(kappa)
+    if own.any():
+        kappa = np.where(own, cowper(diameter, bore, nu), kappa)
+    rates = np.empty((4, *a.shape))
+    rates[0] = 1 / (e * a)
+    rates[2] = 1 / (kappa * g * a)
+    rates[3] = rates[0] * (16 / (diameter * diameter + bore * bore))
+    rates[1] = rates[3] * (e / (2 * g))
+    return rates
+
+
+@dataclass(frozen=True)
+class Points:
+    """Gauss points of all pieces with the flexibility that each stands for, (q, m) each.
+
+    Attributes
+    ----------
+    eta : [m], from the piece's left end
+    axial, torsion, shear, bending : [m/N, rad/(N m), m/N, rad/(N m)]
+    """
+
+    eta: Array
+    axial: Array
+    torsion: Array
+    shear: Array
+    bending: Array
+
+
+@dataclass(frozen=True)
+class Pieces:
+    """Cylinders and cones between neighbouring grid stations, span after span, left to right.
+
+    Attributes
+    ----------
+    span : (m,)
+        The span each piece belongs to, ascending.
+    starts : (n_spans,)
+        First piece of each span.
+    left, length : (m,) [m]
+        Distance of the piece from its span's left node, and its length.
+    segment : (m,)
+        The segment each piece was cut from.
+    first, last_share : (m,) or None
+        Where in its segment a piece begins and ends, 0 to 1; None without cones.
+    """
+
+    span: Ints
+    starts: Ints
+    left: Array
+    length: Array
+    segment: Ints
+    sections: Sections
+    share_left: Array | None = None
+    share_right: Array | None = None
+
+    @property
+    def tapered(self) -> bool:
+        """Whether any piece is a cone."""
+        return self.share_left is not None
+
+    @cached_property
+    def counts(self) -> Ints:
+        """Number of pieces in each span."""
+        return np.diff(self.starts, append=len(self.span))
+
+    @property
+    def last(self) -> Ints:
+        """Last piece of each span."""
+        return self.starts + self.counts - 1
+
+    def _along(self, first: Array, last: Array, share: Array | None) -> Array:
+        begin = first[self.segment]
+        return begin if share is None else begin + (last[self.segment] - begin) * share
+
+    @cached_property
+    def diameter_left(self) -> Array:
+        """(m,) [m]."""
+        return self._along(self.sections.diameter_left, self.sections.diameter_right, self.share_left)
+
+    @cached_property
+    def diameter_right(self) -> Array:
+        """(m,) [m]."""
+        return self._along(self.sections.diameter_left, self.sections.diameter_right, self.share_right)
+
+    @cached_property
+    def bore_left(self) -> Array:
+        """(m,) [m]."""
+        return self._along(self.sections.bore_left, self.sections.bore_right, self.share_left)
+
+    @cached_property
+    def bore_right(self) -> Array:
+        """(m,) [m]."""
+        return self._along(self.sections.bore_left, self.sections.bore_right, self.share_right)
+
+    @cached_property
+    def mass_per_length(self) -> tuple[Array, Array, Array]:
+        """Coefficients of 1, eta, eta^2 of the mass per length, (m,) each [kg/m, kg/m^2, kg/m^3]."""
+        scale = self.sections.density[self.segment] * np.pi / 4
+        d, b = self.diameter_left, self.bore_left
+        c0 = scale * (d - b) * (d + b)
+        if not self.tapered:
+            return c0, np.zeros_like(c0), np.zeros_like(c0)
+        grow_d, grow_b = (self.diameter_right - d) / self.length, (self.bore_right - b) / self.length
+        return c0, 2 * scale * (d * grow_d - b * grow_b), scale * (grow_d**2 - grow_b**2)
+
+    @cached_property
+    def points(self) -> Points:
+        """Two Gauss points a cylinder (exact for a cubic), eight a cone."""
+        nodes, weights = GAUSS_CONE if self.tapered else GAUSS_CYLINDER
+        share = ((nodes + 1) / 2)[:, None]
+        eta, weight = share * self.length, (weights / 2)[:, None] * self.length
+        if not self.tapered:
+            rates = self.sections.flexibility_rates[:, None, self.segment]
+        else:
+            diameter = self.diameter_left + share * (self.diameter_right - self.diameter_left)
+            bore = self.bore_left + share * (self.bore_right - self.bore_left)
+            of = self.sections
+            per_segment = (of.youngs_modulus, of.shear_modulus, of.poisson_ratio, of.shear_coefficient)
+            rates = _rates(diameter, bore, *(values[self.segment] for values in per_segment))
+        return Points(eta, *(rates * weight))
+
+
+def stretch(of_spans: Array, pieces: Pieces) -> Array:
+    """Values of the spans, (..., n_spans), repeated for their pieces, (..., m)."""
+    return of_spans[..., pieces.span]

@@ -1,0 +1,354 @@
+"""The Timoshenko span: flexibilities summed at the elastic centre, exact loads, exact recovery.
+
+A span is a chain of pieces (cylinders or cones) between two connection nodes. Its flexibility is integrated, so the
+element is exact for every contour: each piece has its own axial, torsional, bending and shear flexibility, its own
+elastic centre and its own second moment about it. Every term of the sums is positive and nothing cancels.
+
+Deformations of a span with nodes i (left) and j (right), length l, elastic centre a from i, b = l - a:
+
+    e0 = ux_j - ux_i    e1 = uy_j - uy_i - (b rz_j + a rz_i)    e4 = ry_j - ry_i
+    e3 = rx_j - rx_i    e2 = uz_j - uz_i + (b ry_j + a ry_i)    e5 = rz_j - rz_i
+
+and e = f s + e_load with six uncoupled flexibilities f, because the cross terms vanish at the elastic centre
+(the "elastic centre" of the force method, as in Hardy Cross's column analogy, 1930). Section forces on the face whose
+outward normal is +x, at x from i:
+
+    N = s0, V_y = s1, V_z = s2, M_x = s3, M_y = s4 - s2 (a - x), M_z = s5 + s1 (a - x),  plus the load's own part.
+
+The load's own part is the statically determinate one that leaves the left end free: with mu(x) the load gathered so
+far and nu(x) its moment about x, a force density f and a couple density m give
+N = -f_x mu, V = -f mu, M_x = -m_x mu, M_y = -m_y mu - f_z nu, M_z = -m_z mu + f_y nu.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+from dataclasses import dataclass
+from functools import cached_property
+
+import numpy as np
+from numpy.typing import NDArray
+
+from fe_shaft.fem.dofs import NDOF
+from fe_shaft.fem.pieces import Pieces, Points, stretch
+
+Array = NDArray[np.float64]
+Ints = NDArray[np.intp]
+
+
+@dataclass(frozen=True)
+class Flexibility:
+    """What each piece gives, (m,) each.
+
+    Attributes
+    ----------
+    axial, torsion, shear, bending : [m/N, rad/(N m), m/N, rad/(N m)]
+    centre : [m], the piece's elastic centre from its left end
+    own : [m/N], second moment of its bending flexibility about that centre
+    """
+
+    axial: Array
+    torsion: Array
+    shear: Array
+    bending: Array
+    centre: Array
+    own: Array
+
+
+@dataclass(frozen=True)
+class Spans:
+    """All spans of a grid, condensed.
+
+    Attributes
+    ----------
+    length, centre : (n,) [m]
+    flexibility : (n, 6)
+        Of e0 .. e5, each alone.
+    b_left, b_right : (n, 6, 6)
+        e = b_left u_i + b_right u_j.
+    """
+
+    length: Array
+    centre: Array
+    flexibility: Array
+    b_left: Array
+    b_right: Array
+
+
+def flexibility(pieces: Pieces) -> Flexibility:
+    """Integrate the flexibility of every piece: cylinders in closed form, cones at their Gauss points."""
+    length = pieces.length
+    if not pieces.tapered:
+        rate = pieces.sections.flexibility_rates[:, pieces.segment]
+        axial, torsion, shear, bending = rate * length
+        return Flexibility(axial, torsion, shear, bending, length / 2, bending * (length * length / 12))
+    points = pieces.points
+    bending = points.bending.sum(axis=0)
+    centre = (points.bending * points.eta).sum(axis=0) / bending
+    own = (points.bending * (points.eta - centre) ** 2).sum(axis=0)
+    axial, torsion, shear = (part.sum(axis=0) for part in (points.axial, points.torsion, points.shear))
+    return Flexibility(axial, torsion, shear, bending, centre, own)
+
+
+def condense(pieces: Pieces, give: Flexibility, length: Array) -> Spans:
+    """Sum the flexibilities of each span at its elastic centre.
+
+    Parameters
+    ----------
+    length : (n_spans,) [m]
+        Distance between the connection nodes.
+    """
+    total = np.add.reduceat
+    starts = pieces.starts
+    bending = total(give.bending, starts)
+    place = pieces.left + give.centre
+    centre = total(give.bending * place, starts) / bending
+    arm = place - stretch(centre, pieces)
+    flexibility = np.empty((len(length), NDOF))
+    flexibility[:, 0] = total(give.axial, starts)
+    flexibility[:, 1] = flexibility[:, 2] = total(give.bending * (arm * arm) + give.own + give.shear, starts)
+    flexibility[:, 3] = total(give.torsion, starts)
+    flexibility[:, 4] = flexibility[:, 5] = bending
+    return Spans(length, centre, flexibility, *_deformation_matrices(centre, length - centre))
+
+
+_ONES = np.eye(NDOF)
+
+
+def _deformation_matrices(a: Array, b: Array) -> tuple[Array, Array]:
+    both = np.empty((2, len(a), NDOF, NDOF))
+    both[0], both[1] = -_ONES, _ONES
+    left, right = both
+    left[:, 1, 5], left[:, 2, 4] = -a, a
+    right[:, 1, 5], right[:, 2, 4] = -b, b
+    return left, right
+
+
+@dataclass(frozen=True)
+class Gathered:
+    """A distributed load of unit size: what has gathered up to a place, seen from the span's left node.
+
+    mu is the load itself, nu its moment about that place; at the points (q, m) and at both ends of each piece (m,).
+    """
+
+    mu: Array
+    nu: Array
+    mu_left: Array
+    nu_left: Array
+    mu_right: Array
+    nu_right: Array
+
+
+def gather_uniform(pieces: Pieces) -> Gathered:
+    """A load of 1 per length along each span."""
+    x, right = pieces.left + pieces.points.eta, pieces.left + pieces.length
+    return Gathered(x, x**2 / 2, pieces.left, pieces.left**2 / 2, right, right**2 / 2)
+
+
+def gather_mass(pieces: Pieces) -> Gathered:
+    """The mass of the pieces themselves [kg] and its moment [kg m]: what gravity acts on.
+
+    The area of a cone is a quadratic along it, so mu is a cubic and nu a quartic, both exact.
+    """
+    c0, c1, c2 = pieces.mass_per_length
+
+    def inside(h: Array) -> tuple[Array, Array]:
+        return h * (c0 + h * (c1 / 2 + h * c2 / 3)), h * h * (c0 / 2 + h * (c1 / 6 + h * c2 / 12))
+
+    own, own_moment = inside(pieces.length)
+    mu_left, mu_right = _run(own, pieces)
+    nu_left, nu_right = _run(mu_left * pieces.length + own_moment, pieces)
+    mu, nu = inside(pieces.points.eta)
+    return Gathered(mu + mu_left, nu + nu_left + mu_left * pieces.points.eta, mu_left, nu_left, mu_right, nu_right)
+
+
+def _run(steps: Array, pieces: Pieces) -> tuple[Array, Array]:
+    """Running sums along the last axis that start anew in each span: value left and right of each piece."""
+    after = np.cumsum(steps, axis=-1)
+    before = after - steps
+    base = stretch(before[..., pieces.starts], pieces)
+    return before - base, after - base
+
+
+def load_deformation(pieces: Pieces, spans: Spans, load: Gathered) -> Array:
+    """Deformations e_load of each span under its load's own part.
+
+    Returns
+    -------
+    (n_spans, 6, 6)
+        Times a wrench density (force and couple) it is e_load.
+    """
+    points = pieces.points
+
+    def total(values: Array) -> Array:
+        return np.add.reduceat(values.sum(axis=0), pieces.starts)
+
+    arm = stretch(spans.centre, pieces) - pieces.left - points.eta
+    g_mu, g_nu = points.bending * load.mu, points.bending * load.nu
+    out = np.zeros((len(spans.length), NDOF, NDOF))
+    out[:, 0, 0] = -total(points.axial * load.mu)
+    out[:, 3, 3] = -total(points.torsion * load.mu)
+    out[:, 5, 1] = total(g_nu)
+    out[:, 4, 2] = -out[:, 5, 1]
+    out[:, 5, 5] = out[:, 4, 4] = -total(g_mu)
+    out[:, 1, 1] = out[:, 2, 2] = total(g_nu * arm - points.shear * load.mu)
+    out[:, 2, 4] = total(g_mu * arm)
+    out[:, 1, 5] = -out[:, 2, 4]
+    return out
+
+
+def load_energy(pieces: Pieces, loads: Sequence[tuple[Gathered, Array]]) -> Array:
+    """Twice the energy that the loads' own parts would store by themselves, (n_spans, n_cases).
+
+    Parameters
+    ----------
+    loads : pairs of a unit load and its wrench density (n_spans, 6, n_cases or 1)
+    """
+    points = pieces.points
+    force: Array | int = 0
+    for load, density in loads:
+        force = force + _load_forces(load.mu, load.nu, _by_component(density, pieces)[:, :, None])
+    give = np.array((points.axial, points.shear, points.shear, points.torsion, points.bending, points.bending))
+    per_piece = (give[:, None] * np.square(force)).sum(axis=(0, 2))
+    return np.add.reduceat(per_piece, pieces.starts, axis=-1).T
+
+
+def end_load(load: Gathered, pieces: Pieces) -> Array:
+    """Wrench that the load's own part hands to the right node; (n_spans, 6, 6), times a wrench density."""
+    last = pieces.last
+    mu, nu = load.mu_right[last], load.nu_right[last]
+    out = mu[:, None, None] * _ONES
+    out[:, 4, 2], out[:, 5, 1] = nu, -nu
+    return out
+
+
+def _by_component(of_spans: Array, pieces: Pieces) -> Array:
+    """(n_spans, 6, n_cases) to the pieces, (6, n_cases, m)."""
+    return stretch(of_spans.transpose(1, 2, 0), pieces)
+
+
+def _load_forces(mu: Array, nu: Array, density: Array) -> Array:
+    """Section forces of a load's own part; density (6, n_cases, ...)."""
+    force = -mu * density
+    force[4] -= nu * density[2]
+    force[5] += nu * density[1]
+    return force
+
+
+class Recovery:
+    """Displacements and section forces at both ends of every piece, worked out when asked for.
+
+    Parameters
+    ----------
+    u_node, s : (n_spans, 6, n_cases)
+        Displacements of the spans' left nodes, stored forces of the spans.
+    loads : pairs of a unit load and its wrench density (n_spans, 6, n_cases or 1)
+    """
+
+    def __init__(
+        self,
+        pieces: Pieces,
+        give: Flexibility,
+        centre: Array,
+        u_node: Array,
+        s: Array,
+        loads: Sequence[tuple[Gathered, Array]] = (),
+    ) -> None:
+        self.pieces, self._give, self._loads = pieces, give, loads
+        self._u_node = u_node.transpose(1, 2, 0)
+        self._s = _by_component(s, pieces)
+        self._offset = stretch(centre, pieces) - pieces.left
+
+    @cached_property
+    def _densities(self) -> list[tuple[Gathered, Array]]:
+        return [(load, _by_component(density, self.pieces)) for load, density in self._loads]
+
+    @cached_property
+    def _own_left(self) -> Array:
+        return _own_forces(self._s, self._offset)
+
+    @cached_property
+    def force_left(self) -> Array:
+        """Section forces just right of each piece's left end, (6, n_cases, m)."""
+        force = self._own_left
+        for load, density in self._densities:
+            force = force + _load_forces(load.mu_left, load.nu_left, density)
+        return force
+
+    @cached_property
+    def force_right(self) -> Array:
+        """Section forces just left of each piece's right end, (6, n_cases, m)."""
+        force = _own_forces(self._s, self._offset - self.pieces.length)
+        for load, density in self._densities:
+            force = force + _load_forces(load.mu_right, load.nu_right, density)
+        return force
+
+    @cached_property
+    def u_left(self) -> Array:
+        """Displacements at each piece's left end, (6, n_cases, m)."""
+        steps = self._steps
+        left = np.empty_like(steps)
+        left[3:] = self._start_and_sum(steps[3:], self._u_node[3:])
+        steps[1] += left[5] * self.pieces.length
+        steps[2] -= left[4] * self.pieces.length
+        left[:3] = self._start_and_sum(steps[:3], self._u_node[:3])
+        return left
+
+    @cached_property
+    def u_right(self) -> Array:
+        """Displacements at each piece's right end, (6, n_cases, m)."""
+        return self.u_left + self._steps
+
+    def _start_and_sum(self, steps: Array, u_node: Array) -> Array:
+        """Displacements of the left ends from those of the spans' left nodes."""
+        before = np.empty_like(steps)
+        before[..., 0] = 0.0
+        np.cumsum(steps[..., :-1], axis=-1, out=before[..., 1:])
+        before += stretch(u_node - before[..., self.pieces.starts], self.pieces)
+        return before
+
+    @cached_property
+    def _steps(self) -> Array:
+        """What each piece adds to the displacements; `u_left` adds what comes from the slope at its left end."""
+        give, length, force = self._give, self.pieces.length, self._own_left
+        g0, g1 = give.bending, give.bending * give.centre
+        h0 = give.bending * (length - give.centre)
+        h1 = h0 * give.centre - give.own - give.shear
+        v_y, v_z, m_y, m_z = force[1], force[2], force[4], force[5]
+        steps = np.empty_like(force)
+        steps[0] = give.axial * force[0]
+        steps[1] = h0 * m_z - h1 * v_y
+        steps[2] = -h0 * m_y - h1 * v_z
+        steps[3] = give.torsion * force[3]
+        steps[4] = g0 * m_y + g1 * v_z
+        steps[5] = g0 * m_z - g1 * v_y
+        for load, density in self._densities:
+            steps += _load_steps(self.pieces.points, length, load, density)
+        return steps
+
+
+def _own_forces(s: Array, offset: Array) -> Array:
+    """Section forces at a distance to the left of the elastic centre, the load's own part left out."""
+    force = s.copy()
+    force[4] -= s[2] * offset
+    force[5] += s[1] * offset
+    return force
+
+
+def _load_steps(points: Points, length: Array, load: Gathered, density: Array) -> Array:
+    far = length - points.eta
+    g_mu, g_nu = points.bending * load.mu, points.bending * load.nu
+    turn_mu, turn_nu = g_mu.sum(axis=0), g_nu.sum(axis=0)
+    shift_mu = (g_mu * far).sum(axis=0)
+    shift_nu = (g_nu * far - points.shear * load.mu).sum(axis=0)
+    f_x, f_y, f_z, m_x, m_y, m_z = density
+    return np.array(
+        (
+            -(points.axial * load.mu).sum(axis=0) * f_x,
+            shift_nu * f_y - shift_mu * m_z,
+            shift_nu * f_z + shift_mu * m_y,
+            -(points.torsion * load.mu).sum(axis=0) * m_x,
+            -turn_nu * f_z - turn_mu * m_y,
+            turn_nu * f_y - turn_mu * m_z,
+        )
+    )
