@@ -9,8 +9,7 @@ dropped rows.
 from __future__ import annotations
 
 from collections.abc import Sequence
-from dataclasses import dataclass
-from typing import Any
+from typing import Any, NamedTuple
 
 import numpy as np
 from numpy.typing import NDArray
@@ -25,8 +24,7 @@ Ints = NDArray[np.intp]
 DENSE_LIMIT = 300
 
 
-@dataclass(frozen=True)
-class Springs:
+class Springs(NamedTuple):
     """Springs with a full 6 x 6 law.
 
     Attributes
@@ -48,8 +46,7 @@ class Springs:
     gap: Array
 
 
-@dataclass(frozen=True)
-class Constraint:
+class Constraint(NamedTuple):
     """Displacements held rigidly at a point beside a node.
 
     Attributes
@@ -66,8 +63,7 @@ class Constraint:
     value: Array
 
 
-@dataclass(frozen=True)
-class Reduction:
+class Reduction(NamedTuple):
     """u = T q + g.
 
     Attributes
@@ -87,13 +83,16 @@ class Reduction:
 
     def columns(self, b: Any) -> Any:
         """B T."""
-        return b[:, self.free] if self.free is not None else b @ self.matrix
+        if self.free is None:
+            return b @ self.matrix
+        return b.take(self.free, axis=1) if isinstance(b, np.ndarray) else b[:, self.free]
 
     def expand(self, q: Array) -> Array:
-        """T q."""
+        """T q + g."""
         if self.free is None:
-            return np.asarray(self.matrix @ q)
-        u = np.zeros((len(self.offset), q.shape[1]))
+            return np.asarray(self.matrix @ q) + self.offset[:, None]
+        u = np.empty((len(self.offset), q.shape[1]))
+        u[:] = self.offset[:, None]
         u[self.free] = q
         return u
 

@@ -8,8 +8,7 @@ forces of the parts, never K u. Load cases are columns.
 from __future__ import annotations
 
 from collections.abc import Callable
-from dataclasses import dataclass
-from typing import Any
+from typing import Any, NamedTuple
 
 import numpy as np
 from numpy.typing import NDArray
@@ -25,8 +24,7 @@ Ints = NDArray[np.intp]
 RESIDUAL_STEPS = 2
 
 
-@dataclass(frozen=True)
-class Network:
+class Network(NamedTuple):
     """Everything that gives, between nodes: spans and springs, and what is held.
 
     Attributes
@@ -45,8 +43,7 @@ class Network:
     reduction: Reduction
 
 
-@dataclass(frozen=True)
-class Solution:
+class Solution(NamedTuple):
     """What every later step reads: displacements, stored deformations and stored forces.
 
     Attributes
@@ -60,8 +57,8 @@ class Solution:
         Internal minus applied forces at the nodes: the reaction where something is held, the residual elsewhere.
     residual : (n_cases,)
         Largest residual of the free displacements, relative to the forces that meet there.
-    correction : (n_nodes, 6, n_cases)
-        What the residual steps added to the displacements.
+    correction : (n_free, n_cases), (n_free, n_cases), (n_free,)
+        What the residual steps added to the free displacements, these, and the diagonal of their stiffness.
     """
 
     u: Array
@@ -70,13 +67,12 @@ class Solution:
     spring_force: Array
     unbalanced: Array
     residual: Array
-    correction: Array
+    correction: tuple[Array, Array, Array]
 
     @property
     def digits_lost(self) -> Array:
         """Decimal digits by which the first solution missed the final one, (n_cases,)."""
-        lost = [_lost(self.correction[:, kind], self.u[:, kind]) for kind in (slice(0, 3), slice(3, 6))]
-        return np.maximum(*lost)
+        return _lost(*self.correction)
 
 
 def solve(network: Network, load: Array, span_load: Array | None = None) -> Solution:
@@ -95,33 +91,39 @@ def solve(network: Network, load: Array, span_load: Array | None = None) -> Solu
         Where the stiffness matrix is not positive definite in spite of a model without free motions.
     """
     n, n_cases = network.n_nodes, load.shape[2]
-    law, red = _Law(network), network.reduction
-    b = red.columns(law.matrix)
-    back = _factor(law.stiffness(b))
+    red, law = network.reduction, _Law(network)
+    system = _factor(law, red)
     f = load.reshape(n * NDOF, n_cases)
     gap = law.gap(span_load, n_cases)
-    u = np.empty_like(f)
-    u[:] = red.offset[:, None]
-    s = law.apply(law.matrix @ u - gap)
-    first = u
+    s = _starting_forces(law, red, gap)
+    wanted, q, first = red.contract(f), 0.0, 0.0
     for step in range(1 + RESIDUAL_STEPS):
-        dq = back(red.contract(f - law.matrix.T @ s))
-        s += law.apply(b @ dq)
-        u = u + red.expand(dq)
+        dq = system.solve(wanted - system.b.T @ s)
+        s += system.force @ dq
+        q = q + dq
         if step == 0:
-            first = u
+            first = q
+    u = red.expand(q)
     unbalanced = law.matrix.T @ s - f
-    e = law.matrix @ u - gap
     cut = law.n_span_rows
+    e = law.matrix[cut:] @ u - gap[cut:]
     return Solution(
         u=u.reshape(n, NDOF, n_cases),
         span_force=s[:cut].reshape(-1, NDOF, n_cases),
-        spring_deformation=e[cut:].reshape(-1, NDOF, n_cases),
+        spring_deformation=e.reshape(-1, NDOF, n_cases),
         spring_force=s[cut:].reshape(-1, NDOF, n_cases),
         unbalanced=unbalanced.reshape(n, NDOF, n_cases),
-        residual=_residual(red.contract(unbalanced), red.turning, s, f, float(network.spans.length.max())),
-        correction=(u - first).reshape(n, NDOF, n_cases),
+        residual=_residual(red.contract(unbalanced), red.turning, s, float(network.spans.length.max())),
+        correction=(q - first, q, system.diagonal),
     )
+
+
+def _starting_forces(law: _Law, red: Reduction, gap: Array) -> Array:
+    """Forces of all parts while the free displacements are still zero."""
+    moved = red.offset.any()
+    if not moved and not gap.any():
+        return np.zeros_like(gap)
+    return law.apply(law.matrix @ red.offset[:, None] - gap if moved else -gap)
 
 
 class _Law:
@@ -147,16 +149,16 @@ class _Law:
             s[self.n_span_rows :] = (k @ e[self.n_span_rows :].reshape(len(k), NDOF, -1)).reshape(-1, e.shape[1])
         return s
 
-    def stiffness(self, b: Any) -> Any:
-        """B^T D B over the free displacements."""
+    def forces(self, b: Any) -> Any:
+        """D B: forces of all parts for unit values of the free displacements."""
         if isinstance(b, np.ndarray):
-            return b.T @ self.apply(b)
+            return self.apply(b)
         from scipy import sparse
 
         blocks = [sparse.dia_array((self._diagonal.T, [0]), shape=(self.n_span_rows, self.n_span_rows))]
         if len(self._springs.stiffness):
             blocks.append(sparse.block_diag(list(self._springs.stiffness)))
-        return (b.T @ sparse.block_diag(blocks, format="csr") @ b).tocsc()
+        return sparse.block_diag(blocks, format="csr") @ b
 
     def gap(self, span_load: Array | None, n_cases: int) -> Array:
         """Deformations that no force goes with: loads on the spans, offsets of the supports."""
@@ -167,49 +169,69 @@ class _Law:
         return gap
 
 
-def _factor(k: Any) -> Callable[[Array], Array]:
-    """Factor the stiffness, scaled by its diagonal, once."""
-    size = k.shape[0]
-    if size == 0:
-        return lambda r: r
+class _System(NamedTuple):
+    """The factored system; neither factorisation needs its rows scaled, because no pivots are chosen.
+
+    Attributes
+    ----------
+    b, force : B T and D B T
+    diagonal : (n_free,) of the stiffness
+    solve : of a right-hand side
+    """
+
+    b: Any
+    force: Any
+    diagonal: Array
+    solve: Callable[[Array], Array]
+
+
+def _factor(law: _Law, red: Reduction) -> _System:
+    """Assemble and factor the stiffness, once."""
+    b = red.columns(law.matrix)
+    force = law.forces(b)
+    k = b.T @ force
+    if k.shape[0] == 0:
+        return _System(b, force, np.empty(0), lambda r: r)
     diagonal = k.diagonal()
-    if not (np.isfinite(diagonal).all() and (diagonal > 0).all()):
+    if not (diagonal.min() > 0 and diagonal.max() < np.inf):
         raise SolutionError("the stiffness matrix has a displacement that nothing holds or that overflows")
-    scale = (1 / np.sqrt(diagonal))[:, None]
-    if isinstance(k, np.ndarray):
-        try:
-            inverse = np.linalg.inv(k * scale * scale.T)
-        except np.linalg.LinAlgError:
-            raise SolutionError("the stiffness matrix is singular in working precision") from None
-        return lambda r: scale * (inverse @ (scale * r))
-    from scipy import sparse
+    return _System(b, force, diagonal, _dense(k) if isinstance(k, np.ndarray) else _sparse(k.tocsc()))
+
+
+def _dense(k: Array) -> Callable[[Array], Array]:
+    from scipy.linalg import lapack
+
+    factor, info = lapack.dpotrf(k.T, lower=1)
+    if info:
+        raise SolutionError("the stiffness matrix is not positive definite in working precision")
+    return lambda r: lapack.dpotrs(factor, r, lower=1)[0]
+
+
+def _sparse(k: Any) -> Callable[[Array], Array]:
     from scipy.sparse.linalg import splu
 
-    by = sparse.dia_array((scale.T, [0]), shape=(size, size))
     try:
-        lu = splu(
-            (by @ k @ by).tocsc(), permc_spec="MMD_AT_PLUS_A", diag_pivot_thresh=0.0, options={"SymmetricMode": True}
-        )
+        lu = splu(k, permc_spec="MMD_AT_PLUS_A", diag_pivot_thresh=0.0, options={"SymmetricMode": True})
     except RuntimeError:
         raise SolutionError("the stiffness matrix is singular in working precision") from None
-    return lambda r: scale * lu.solve(scale * r)
+    solve: Callable[[Array], Array] = lu.solve
+    return solve
 
 
-def _residual(free: Array, turning: NDArray[np.bool_], s: Array, f: Array, length: float) -> Array:
-    """Largest force or moment left over at the free displacements, relative to the forces of loads and parts.
+def _residual(free: Array, turning: NDArray[np.bool_], s: Array, length: float) -> Array:
+    """Largest force or moment left over at the free displacements, relative to the forces in the parts.
 
     Moments are turned into forces by the length of the longest span.
     """
-    size = np.full(f.shape[1], np.finfo(float).tiny)
-    weigh = np.array([1.0, 1.0, 1.0, 1 / length, 1 / length, 1 / length])[:, None]
-    for force in (s, f):
-        by_kind = np.abs(force.reshape(-1, NDOF, f.shape[1])).max(axis=0, initial=0.0)
-        size = np.maximum(size, (weigh * by_kind).max(axis=0))
-    left = np.abs(free) / np.where(turning, length, 1.0)[:, None]
-    return np.asarray(left.max(axis=0, initial=0.0) / size)
+    by_kind = np.abs(s.reshape(-1, 2, NDOF // 2, s.shape[1])).max(axis=(0, 2), initial=np.finfo(float).tiny)
+    left = np.abs(free)
+    left[turning] /= length
+    return np.asarray(left.max(axis=0, initial=0.0) / np.maximum(by_kind[0], by_kind[1] / length))
 
 
-def _lost(correction: Array, u: Array) -> Array:
-    size = np.maximum(np.abs(u).max(axis=(0, 1)), np.finfo(float).tiny)
-    missed = np.abs(correction).max(axis=(0, 1)) / size
-    return np.log10(np.maximum(missed / np.finfo(float).eps, 1.0))
+def _lost(correction: Array, q: Array, diagonal: Array) -> Array:
+    """Digits lost, displacements weighed by the forces that they stand for."""
+    weigh = np.sqrt(diagonal)[:, None]
+    missed = np.abs(weigh * correction).max(axis=0, initial=0.0)
+    size = np.abs(weigh * q).max(axis=0, initial=np.finfo(float).tiny)
+    return np.log10(np.maximum(missed / size / np.finfo(float).eps, 1.0))

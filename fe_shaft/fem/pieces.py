@@ -2,13 +2,14 @@
 
 from __future__ import annotations
 
+import math
 from dataclasses import dataclass
 from functools import cached_property
 
 import numpy as np
 from numpy.typing import NDArray
 
-from fe_shaft.fem.section import area, cowper
+from fe_shaft.fem.section import area, cowper, cowper_solid
 
 Array = NDArray[np.float64]
 Ints = NDArray[np.intp]
@@ -43,13 +44,6 @@ class Sections:
     shear_coefficient: Array
 
     @cached_property
-    def tapered(self) -> bool:
-        """Whether any segment is a cone."""
-        return not (
-            np.array_equal(self.diameter_left, self.diameter_right) and np.array_equal(self.bore_left, self.bore_right)
-        )
-
-    @cached_property
     def flexibility_rates(self) -> Array:
         """Axial, torsional, shear and bending flexibility per length at the left ends, (4, n)."""
         return _rates(
@@ -63,15 +57,19 @@ class Sections:
 
 
 def _rates(diameter: Array, bore: Array, e: Array, g: Array, nu: Array, kappa: Array) -> Array:
-    a = area(diameter, bore)
-    own = np.isnan(kappa)
-    if own.any():
-        kappa = np.where(own, cowper(diameter, bore, nu), kappa)
-    rates = np.empty((4, *a.shape))
-    rates[0] = 1 / (e * a)
-    rates[2] = 1 / (kappa * g * a)
-    rates[3] = rates[0] * (16 / (diameter * diameter + bore * bore))
-    rates[1] = rates[3] * (e / (2 * g))
+    hollow = bool(bore.any())
+    squares = diameter * diameter + bore * bore if hollow else diameter * diameter
+    stiffness = e * (area(diameter, bore) if hollow else (np.pi / 4) * squares)
+    rates = np.empty((4, *stiffness.shape))
+    np.divide(1.0, stiffness, out=rates[0])
+    rates[3] = rates[0] * (16 / squares)
+    ratio = e / g
+    rates[1] = rates[3] * (ratio / 2)
+    if kappa.size and math.isnan(kappa.flat[0]) and np.isnan(kappa).all():
+        kappa = cowper(diameter, bore, nu) if hollow else cowper_solid(nu)
+    else:
+        kappa = np.where(np.isnan(kappa), cowper(diameter, bore, nu), kappa)
+    rates[2] = rates[0] * (ratio / kappa)
     return rates
 
 
@@ -98,10 +96,8 @@ class Pieces:
 
     Attributes
     ----------
-    span : (m,)
-        The span each piece belongs to, ascending.
-    starts : (n_spans,)
-        First piece of each span.
+    starts, counts : (n_spans,)
+        First piece of each span, and number of its pieces.
     left, length : (m,) [m]
         Distance of the piece from its span's left node, and its length.
     segment : (m,)
@@ -110,8 +106,8 @@ class Pieces:
         Where in its segment a piece begins and ends, 0 to 1; None without cones.
     """
 
-    span: Ints
     starts: Ints
+    counts: Ints
     left: Array
     length: Array
     segment: Ints
@@ -125,9 +121,9 @@ class Pieces:
         return self.share_left is not None
 
     @cached_property
-    def counts(self) -> Ints:
-        """Number of pieces in each span."""
-        return np.diff(self.starts, append=len(self.span))
+    def span(self) -> Ints:
+        """The span each piece belongs to, ascending, (m,)."""
+        return np.arange(len(self.starts)).repeat(self.counts)
 
     @property
     def last(self) -> Ints:
@@ -188,4 +184,4 @@ class Pieces:
 
 def stretch(of_spans: Array, pieces: Pieces) -> Array:
     """Values of the spans, (..., n_spans), repeated for their pieces, (..., m)."""
-    return of_spans[..., pieces.span]
+    return of_spans.repeat(pieces.counts, axis=-1)

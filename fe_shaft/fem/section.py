@@ -13,11 +13,6 @@ def area(diameter: Array, bore: Array) -> Array:
     return np.pi / 4 * (diameter - bore) * (diameter + bore)
 
 
-def second_moment(diameter: Array, bore: Array) -> Array:
-    """Second moment of area about a diameter [m^4]; the polar one is twice it."""
-    return np.pi / 64 * (diameter - bore) * (diameter + bore) * (diameter**2 + bore**2)
-
-
 def cowper(diameter: Array, bore: Array, poisson: Array) -> Array:
     """Shear coefficient of a round, solid or hollow.
 
@@ -28,3 +23,8 @@ def cowper(diameter: Array, bore: Array, poisson: Array) -> Array:
     m2 = (bore / diameter) ** 2
     p2 = (1 + m2) ** 2
     return 6 * (1 + poisson) * p2 / ((7 + 6 * poisson) * p2 + (20 + 12 * poisson) * m2)
+
+
+def cowper_solid(poisson: Array) -> Array:
+    """The same for a solid round."""
+    return 6 * (1 + poisson) / (7 + 6 * poisson)

@@ -23,8 +23,8 @@ N = -f_x mu, V = -f mu, M_x = -m_x mu, M_y = -m_y mu - f_z nu, M_z = -m_z mu + f
 from __future__ import annotations
 
 from collections.abc import Sequence
-from dataclasses import dataclass
 from functools import cached_property
+from typing import NamedTuple
 
 import numpy as np
 from numpy.typing import NDArray
@@ -36,8 +36,7 @@ Array = NDArray[np.float64]
 Ints = NDArray[np.intp]
 
 
-@dataclass(frozen=True)
-class Flexibility:
+class Flexibility(NamedTuple):
     """What each piece gives, (m,) each.
 
     Attributes
@@ -55,8 +54,7 @@ class Flexibility:
     own: Array
 
 
-@dataclass(frozen=True)
-class Spans:
+class Spans(NamedTuple):
     """All spans of a grid, condensed.
 
     Attributes
@@ -79,7 +77,7 @@ def flexibility(pieces: Pieces) -> Flexibility:
     """Integrate the flexibility of every piece: cylinders in closed form, cones at their Gauss points."""
     length = pieces.length
     if not pieces.tapered:
-        rate = pieces.sections.flexibility_rates[:, pieces.segment]
+        rate = pieces.sections.flexibility_rates.take(pieces.segment, axis=1)
         axial, torsion, shear, bending = rate * length
         return Flexibility(axial, torsion, shear, bending, length / 2, bending * (length * length / 12))
     points = pieces.points
@@ -124,8 +122,7 @@ def _deformation_matrices(a: Array, b: Array) -> tuple[Array, Array]:
     return left, right
 
 
-@dataclass(frozen=True)
-class Gathered:
+class Gathered(NamedTuple):
     """A distributed load of unit size: what has gathered up to a place, seen from the span's left node.
 
     mu is the load itself, nu its moment about that place; at the points (q, m) and at both ends of each piece (m,).
@@ -264,13 +261,9 @@ class Recovery:
         return [(load, _by_component(density, self.pieces)) for load, density in self._loads]
 
     @cached_property
-    def _own_left(self) -> Array:
-        return _own_forces(self._s, self._offset)
-
-    @cached_property
     def force_left(self) -> Array:
         """Section forces just right of each piece's left end, (6, n_cases, m)."""
-        force = self._own_left
+        force = _own_forces(self._s, self._offset)
         for load, density in self._densities:
             force = force + _load_forces(load.mu_left, load.nu_left, density)
         return force
@@ -286,12 +279,12 @@ class Recovery:
     @cached_property
     def u_left(self) -> Array:
         """Displacements at each piece's left end, (6, n_cases, m)."""
-        steps = self._steps
+        steps, length = self._steps, self.pieces.length
         left = np.empty_like(steps)
-        left[3:] = self._start_and_sum(steps[3:], self._u_node[3:])
-        steps[1] += left[5] * self.pieces.length
-        steps[2] -= left[4] * self.pieces.length
-        left[:3] = self._start_and_sum(steps[:3], self._u_node[:3])
+        self._sum(steps[3:], self._u_node[3:], left[3:])
+        steps[1] += left[5] * length
+        steps[2] -= left[4] * length
+        self._sum(steps[:3], self._u_node[:3], left[:3])
         return left
 
     @cached_property
@@ -299,32 +292,35 @@ class Recovery:
         """Displacements at each piece's right end, (6, n_cases, m)."""
         return self.u_left + self._steps
 
-    def _start_and_sum(self, steps: Array, u_node: Array) -> Array:
-        """Displacements of the left ends from those of the spans' left nodes."""
-        before = np.empty_like(steps)
-        before[..., 0] = 0.0
-        np.cumsum(steps[..., :-1], axis=-1, out=before[..., 1:])
-        before += stretch(u_node - before[..., self.pieces.starts], self.pieces)
-        return before
+    def _sum(self, steps: Array, u_node: Array, left: Array) -> None:
+        """Running sums from the spans' left nodes: values at the left ends."""
+        left[..., 0] = 0.0
+        np.cumsum(steps[..., :-1], axis=-1, out=left[..., 1:])
+        left += stretch(u_node - left[..., self.pieces.starts], self.pieces)
 
     @cached_property
     def _steps(self) -> Array:
-        """What each piece adds to the displacements; `u_left` adds what comes from the slope at its left end."""
-        give, length, force = self._give, self.pieces.length, self._own_left
-        g0, g1 = give.bending, give.bending * give.centre
-        h0 = give.bending * (length - give.centre)
-        h1 = h0 * give.centre - give.own - give.shear
-        v_y, v_z, m_y, m_z = force[1], force[2], force[4], force[5]
-        steps = np.empty_like(force)
-        steps[0] = give.axial * force[0]
-        steps[1] = h0 * m_z - h1 * v_y
-        steps[2] = -h0 * m_y - h1 * v_z
-        steps[3] = give.torsion * force[3]
-        steps[4] = g0 * m_y + g1 * v_z
-        steps[5] = g0 * m_z - g1 * v_y
+        """What each piece adds to the displacements; `u_left` adds what comes from the slope at its left end.
+
+        Both planes go together: shear (V_y, V_z) with moment (M_z, -M_y), so that M' = -V in each.
+        """
+        give, s = self._give, self._s
+        shear = s[1:3]
+        moment = s[:3:-1] * _TURN_SIGNS + shear * self._offset
+        h0 = give.bending * (self.pieces.length - give.centre)
+        across = h0 * moment - (h0 * give.centre - give.own - give.shear) * shear
+        turn = give.bending * (moment - give.centre * shear)
+        axial, torsion = give.axial * s[0], give.torsion * s[3]
         for load, density in self._densities:
-            steps += _load_steps(self.pieces.points, length, load, density)
+            more = _load_steps(self.pieces.points, self.pieces.length, load, density)
+            axial, across, torsion, turn = axial + more[0], across + more[1], torsion + more[2], turn + more[3]
+        steps = np.empty_like(s)
+        steps[0], steps[1:3], steps[3], steps[5] = axial, across, torsion, turn[0]
+        np.negative(turn[1], out=steps[4])
         return steps
+
+
+_TURN_SIGNS = np.array([1.0, -1.0])[:, None, None]
 
 
 def _own_forces(s: Array, offset: Array) -> Array:
@@ -335,20 +331,14 @@ def _own_forces(s: Array, offset: Array) -> Array:
     return force
 
 
-def _load_steps(points: Points, length: Array, load: Gathered, density: Array) -> Array:
-    far = length - points.eta
-    g_mu, g_nu = points.bending * load.mu, points.bending * load.nu
-    turn_mu, turn_nu = g_mu.sum(axis=0), g_nu.sum(axis=0)
-    shift_mu = (g_mu * far).sum(axis=0)
-    shift_nu = (g_nu * far - points.shear * load.mu).sum(axis=0)
-    f_x, f_y, f_z, m_x, m_y, m_z = density
-    return np.array(
-        (
-            -(points.axial * load.mu).sum(axis=0) * f_x,
-            shift_nu * f_y - shift_mu * m_z,
-            shift_nu * f_z + shift_mu * m_y,
-            -(points.torsion * load.mu).sum(axis=0) * m_x,
-            -turn_nu * f_z - turn_mu * m_y,
-            turn_nu * f_y - turn_mu * m_z,
-        )
+def _load_steps(points: Points, length: Array, load: Gathered, density: Array) -> tuple[Array, Array, Array, Array]:
+    """What a load's own part adds in each piece: along, across (2, ...), twist, turn (2, ...)."""
+    g_mu, g_nu, far = points.bending * load.mu, points.bending * load.nu, length - points.eta
+    force, couple = density[1:3], density[:3:-1] * _TURN_SIGNS
+    shift = (g_nu * far - points.shear * load.mu).sum(axis=0)
+    return (
+        -(points.axial * load.mu).sum(axis=0) * density[0],
+        shift * force - (g_mu * far).sum(axis=0) * couple,
+        -(points.torsion * load.mu).sum(axis=0) * density[3],
+        g_nu.sum(axis=0) * force - g_mu.sum(axis=0) * couple,
     )

@@ -28,8 +28,8 @@ def chain(lengths, left, right=None, *, bores=None, end_bores=None, spans=None, 
         density=RHO * ones,
         shear_coefficient=kappa * ones,
     )
-    shares = (0 * ones, ones) if sections.tapered else (None, None)
-    return Pieces(span, starts, ends - ends[starts][span], lengths, np.arange(m), sections, *shares)
+    shares = (0 * ones, ones) if right is not None or end_bores is not None else (None, None)
+    return Pieces(starts, np.bincount(span), ends - ends[starts][span], lengths, np.arange(m), sections, *shares)
 
 
 def condensed(pieces: Pieces) -> Spans:
