@@ -92,7 +92,9 @@ def run_pynite(problem: Problem) -> Array:
     for k, diameter in enumerate(problem.diameter.tolist()):
         if diameter not in seen:
             seen[diameter] = f"S{len(seen)}"
-            model.add_section(seen[diameter], float(area[k]), float(inertia[k]), float(inertia[k]), float(2 * inertia[k]))
+            model.add_section(
+                seen[diameter], float(area[k]), float(inertia[k]), float(inertia[k]), float(2 * inertia[k])
+            )
         model.add_member(f"M{k}", f"N{k}", f"N{k + 1}", "steel", seen[diameter])
     for node, (axial, radial, tilt) in problem.supports.items():
         for dof, k in zip(("DX", "DY", "DZ", "RY", "RZ"), (axial, radial, radial, tilt, tilt), strict=True):

@@ -102,6 +102,7 @@ class Reduction(NamedTuple):
 
 
 def is_dense(n_nodes: int) -> bool:
+    """Whether a system is small enough to be carried densely."""
     return n_nodes * NDOF <= DENSE_LIMIT
 
 

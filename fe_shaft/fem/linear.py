@@ -16,7 +16,7 @@ from numpy.typing import NDArray
 from fe_shaft.errors import SolutionError
 from fe_shaft.fem.assembly import Reduction, Springs, scatter
 from fe_shaft.fem.dofs import NDOF
-from fe_shaft.fem.span import Spans
+from fe_shaft.fem.span import Spans, deformation_matrices
 
 Array = NDArray[np.float64]
 Ints = NDArray[np.intp]
@@ -95,8 +95,9 @@ def solve(network: Network, load: Array, span_load: Array | None = None) -> Solu
     system = _factor(law, red)
     f = load.reshape(n * NDOF, n_cases)
     gap = law.gap(span_load, n_cases)
-    s = _starting_forces(law, red, gap)
-    wanted, q, first = red.contract(f), 0.0, 0.0
+    s = law.starting_forces(red.offset, gap, n_cases)
+    wanted = red.contract(f)
+    q = first = np.zeros_like(wanted)
     for step in range(1 + RESIDUAL_STEPS):
         dq = system.solve(wanted - system.b.T @ s)
         s += system.force @ dq
@@ -106,7 +107,9 @@ def solve(network: Network, load: Array, span_load: Array | None = None) -> Solu
     u = red.expand(q)
     unbalanced = law.matrix.T @ s - f
     cut = law.n_span_rows
-    e = law.matrix[cut:] @ u - gap[cut:]
+    e = law.matrix[cut:] @ u
+    if gap is not None:
+        e -= gap[cut:]
     return Solution(
         u=u.reshape(n, NDOF, n_cases),
         span_force=s[:cut].reshape(-1, NDOF, n_cases),
@@ -118,24 +121,18 @@ def solve(network: Network, load: Array, span_load: Array | None = None) -> Solu
     )
 
 
-def _starting_forces(law: _Law, red: Reduction, gap: Array) -> Array:
-    """Forces of all parts while the free displacements are still zero."""
-    moved = red.offset.any()
-    if not moved and not gap.any():
-        return np.zeros_like(gap)
-    return law.apply(law.matrix @ red.offset[:, None] - gap if moved else -gap)
-
-
 class _Law:
     """B of all parts, and their laws: spans diagonal, springs 6 x 6."""
 
     def __init__(self, network: Network) -> None:
         spans, springs = network.spans, network.springs
-        self.n_span_rows = len(network.left) * NDOF
+        n = len(network.left)
+        self.n_span_rows = n * NDOF
+        block_a, block_b = deformation_matrices(spans, len(springs.node_a))
+        block_a[n:] = springs.b_a
+        np.negative(springs.b_b, out=block_b[n:])
         node_a = np.concatenate([network.left, springs.node_a])
         node_b = np.concatenate([network.right, springs.node_b])
-        block_a = np.concatenate([spans.b_left, springs.b_a])
-        block_b = np.concatenate([spans.b_right, -springs.b_b])
         self.matrix: Any = scatter(network.n_nodes, node_a, block_a, node_b, block_b)
         self._diagonal = 1.0 / spans.flexibility.reshape(-1, 1)
         self._springs = springs
@@ -160,13 +157,25 @@ class _Law:
             blocks.append(sparse.block_diag(list(self._springs.stiffness)))
         return sparse.block_diag(blocks, format="csr") @ b
 
-    def gap(self, span_load: Array | None, n_cases: int) -> Array:
-        """Deformations that no force goes with: loads on the spans, offsets of the supports."""
+    def gap(self, span_load: Array | None, n_cases: int) -> Array | None:
+        """Deformations that no force goes with: loads on the spans, offsets of the supports; None without any."""
+        offsets = self._springs.gap
+        if span_load is None and not offsets.any():
+            return None
         gap = np.zeros((self.matrix.shape[0], n_cases))
         if span_load is not None:
             gap[: self.n_span_rows] = span_load.reshape(self.n_span_rows, n_cases)
-        gap[self.n_span_rows :] = self._springs.gap.reshape(-1, 1)
+        gap[self.n_span_rows :] = offsets.reshape(-1, 1)
         return gap
+
+    def starting_forces(self, offset: Array, gap: Array | None, n_cases: int) -> Array:
+        """Forces of all parts while the free displacements are still zero."""
+        e = np.zeros((self.matrix.shape[0], n_cases))
+        if offset.any():
+            e += self.matrix @ offset[:, None]
+        elif gap is None:
+            return e
+        return self.apply(e if gap is None else e - gap)
 
 
 class _System(NamedTuple):
@@ -192,10 +201,7 @@ def _factor(law: _Law, red: Reduction) -> _System:
     k = b.T @ force
     if k.shape[0] == 0:
         return _System(b, force, np.empty(0), lambda r: r)
-    diagonal = k.diagonal()
-    if not (diagonal.min() > 0 and diagonal.max() < np.inf):
-        raise SolutionError("the stiffness matrix has a displacement that nothing holds or that overflows")
-    return _System(b, force, diagonal, _dense(k) if isinstance(k, np.ndarray) else _sparse(k.tocsc()))
+    return _System(b, force, k.diagonal(), _dense(k) if isinstance(k, np.ndarray) else _sparse(k.tocsc()))
 
 
 def _dense(k: Array) -> Callable[[Array], Array]:
@@ -204,7 +210,7 @@ def _dense(k: Array) -> Callable[[Array], Array]:
     factor, info = lapack.dpotrf(k.T, lower=1)
     if info:
         raise SolutionError("the stiffness matrix is not positive definite in working precision")
-    return lambda r: lapack.dpotrs(factor, r, lower=1)[0]
+    return lambda r: np.asarray(lapack.dpotrs(factor, r, lower=1)[0])
 
 
 def _sparse(k: Any) -> Callable[[Array], Array]:
@@ -223,10 +229,11 @@ def _residual(free: Array, turning: NDArray[np.bool_], s: Array, length: float) 
 
     Moments are turned into forces by the length of the longest span.
     """
-    by_kind = np.abs(s.reshape(-1, 2, NDOF // 2, s.shape[1])).max(axis=(0, 2), initial=np.finfo(float).tiny)
+    largest = np.abs(s).reshape(-1, NDOF, s.shape[1]).max(axis=0, initial=np.finfo(float).tiny)
+    largest[NDOF // 2 :] /= length
     left = np.abs(free)
     left[turning] /= length
-    return np.asarray(left.max(axis=0, initial=0.0) / np.maximum(by_kind[0], by_kind[1] / length))
+    return np.asarray(left.max(axis=0, initial=0.0) / largest.max(axis=0))
 
 
 def _lost(correction: Array, q: Array, diagonal: Array) -> Array:
@@ -234,4 +241,4 @@ def _lost(correction: Array, q: Array, diagonal: Array) -> Array:
     weigh = np.sqrt(diagonal)[:, None]
     missed = np.abs(weigh * correction).max(axis=0, initial=0.0)
     size = np.abs(weigh * q).max(axis=0, initial=np.finfo(float).tiny)
-    return np.log10(np.maximum(missed / size / np.finfo(float).eps, 1.0))
+    return np.asarray(np.log10(np.maximum(missed / size / np.finfo(float).eps, 1.0)))

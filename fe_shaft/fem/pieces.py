@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-import math
 from dataclasses import dataclass
 from functools import cached_property
 
@@ -22,7 +21,7 @@ GAUSS_CONE = np.polynomial.legendre.leggauss(8)
 
 @dataclass(frozen=True)
 class Sections:
-    """Segments of all shafts, one after the other, (n,) each.
+    """Segments of all shafts, one after the other, (n,) each; material figures may be (1,) where all are the same.
 
     Attributes
     ----------
@@ -65,10 +64,10 @@ def _rates(diameter: Array, bore: Array, e: Array, g: Array, nu: Array, kappa: A
     rates[3] = rates[0] * (16 / squares)
     ratio = e / g
     rates[1] = rates[3] * (ratio / 2)
-    if kappa.size and math.isnan(kappa.flat[0]) and np.isnan(kappa).all():
-        kappa = cowper(diameter, bore, nu) if hollow else cowper_solid(nu)
-    else:
-        kappa = np.where(np.isnan(kappa), cowper(diameter, bore, nu), kappa)
+    by_cowper = np.isnan(kappa)
+    if by_cowper.any():
+        own = cowper(diameter, bore, nu) if hollow else cowper_solid(nu)
+        kappa = own if by_cowper.all() else np.where(by_cowper, own, kappa)
     rates[2] = rates[0] * (ratio / kappa)
     return rates
 
@@ -104,6 +103,7 @@ class Pieces:
         The segment each piece was cut from.
     first, last_share : (m,) or None
         Where in its segment a piece begins and ends, 0 to 1; None without cones.
+    chains : first piece of each further chain of spans (a model's other shafts)
     """
 
     starts: Ints
@@ -114,6 +114,7 @@ class Pieces:
     sections: Sections
     share_left: Array | None = None
     share_right: Array | None = None
+    chains: tuple[int, ...] = ()
 
     @property
     def tapered(self) -> bool:
@@ -129,6 +130,9 @@ class Pieces:
     def last(self) -> Ints:
         """Last piece of each span."""
         return self.starts + self.counts - 1
+
+    def _of_segment(self, values: Array) -> Array:
+        return values if len(values) == 1 else values[self.segment]
 
     def _along(self, first: Array, last: Array, share: Array | None) -> Array:
         begin = first[self.segment]
@@ -157,7 +161,7 @@ class Pieces:
     @cached_property
     def mass_per_length(self) -> tuple[Array, Array, Array]:
         """Coefficients of 1, eta, eta^2 of the mass per length, (m,) each [kg/m, kg/m^2, kg/m^3]."""
-        scale = self.sections.density[self.segment] * np.pi / 4
+        scale = self._of_segment(self.sections.density) * (np.pi / 4)
         d, b = self.diameter_left, self.bore_left
         c0 = scale * (d - b) * (d + b)
         if not self.tapered:
@@ -178,10 +182,24 @@ class Pieces:
             bore = self.bore_left + share * (self.bore_right - self.bore_left)
             of = self.sections
             per_segment = (of.youngs_modulus, of.shear_modulus, of.poisson_ratio, of.shear_coefficient)
-            rates = _rates(diameter, bore, *(values[self.segment] for values in per_segment))
+            rates = _rates(diameter, bore, *(self._of_segment(values) for values in per_segment))
         return Points(eta, *(rates * weight))
 
 
 def stretch(of_spans: Array, pieces: Pieces) -> Array:
     """Values of the spans, (..., n_spans), repeated for their pieces, (..., m)."""
     return of_spans.repeat(pieces.counts, axis=-1)
+
+
+def sums_before(steps: Array, pieces: Pieces) -> Array:
+    """Sums of the steps of the pieces to the left, (..., m), of which only differences within a span mean something.
+
+    They start anew in each chain, so that large movements of one shaft do not round off small ones of another.
+    """
+    before = np.zeros_like(steps)
+    if len(pieces.starts) == steps.shape[-1]:  # every piece is a span of its own
+        return before
+    ends = (*pieces.chains, steps.shape[-1])
+    for first, last in zip((0, *pieces.chains), ends, strict=True):
+        np.cumsum(steps[..., first : last - 1], axis=-1, out=before[..., first + 1 : last])
+    return before

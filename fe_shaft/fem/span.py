@@ -30,7 +30,7 @@ import numpy as np
 from numpy.typing import NDArray
 
 from fe_shaft.fem.dofs import NDOF
-from fe_shaft.fem.pieces import Pieces, Points, stretch
+from fe_shaft.fem.pieces import Pieces, Points, stretch, sums_before
 
 Array = NDArray[np.float64]
 Ints = NDArray[np.intp]
@@ -62,15 +62,11 @@ class Spans(NamedTuple):
     length, centre : (n,) [m]
     flexibility : (n, 6)
         Of e0 .. e5, each alone.
-    b_left, b_right : (n, 6, 6)
-        e = b_left u_i + b_right u_j.
     """
 
     length: Array
     centre: Array
     flexibility: Array
-    b_left: Array
-    b_right: Array
 
 
 def flexibility(pieces: Pieces) -> Flexibility:
@@ -104,21 +100,23 @@ def condense(pieces: Pieces, give: Flexibility, length: Array) -> Spans:
     arm = place - stretch(centre, pieces)
     flexibility = np.empty((len(length), NDOF))
     flexibility[:, 0] = total(give.axial, starts)
-    flexibility[:, 1] = flexibility[:, 2] = total(give.bending * (arm * arm) + give.own + give.shear, starts)
+    flexibility[:, 1:3] = total(give.bending * (arm * arm) + give.own + give.shear, starts)[:, None]
     flexibility[:, 3] = total(give.torsion, starts)
-    flexibility[:, 4] = flexibility[:, 5] = bending
-    return Spans(length, centre, flexibility, *_deformation_matrices(centre, length - centre))
+    flexibility[:, 4:] = bending[:, None]
+    return Spans(length, centre, flexibility)
 
 
 _ONES = np.eye(NDOF)
 
 
-def _deformation_matrices(a: Array, b: Array) -> tuple[Array, Array]:
-    both = np.empty((2, len(a), NDOF, NDOF))
-    both[0], both[1] = -_ONES, _ONES
-    left, right = both
-    left[:, 1, 5], left[:, 2, 4] = -a, a
-    right[:, 1, 5], right[:, 2, 4] = -b, b
+def deformation_matrices(spans: Spans, more: int = 0) -> tuple[Array, Array]:
+    """Matrices of e = b_left u_i + b_right u_j, (n + more, 6, 6) each; the rows beyond the spans are left empty."""
+    n = len(spans.length)
+    left, right = np.empty((2, n + more, NDOF, NDOF))
+    left[:n], right[:n] = -_ONES, _ONES
+    left[:n, 1, 5], left[:n, 2, 4] = -spans.centre, spans.centre
+    right[:n, 2, 4] = spans.length - spans.centre
+    right[:n, 1, 5] = -right[:n, 2, 4]
     return left, right
 
 
@@ -161,10 +159,9 @@ def gather_mass(pieces: Pieces) -> Gathered:
 
 def _run(steps: Array, pieces: Pieces) -> tuple[Array, Array]:
     """Running sums along the last axis that start anew in each span: value left and right of each piece."""
-    after = np.cumsum(steps, axis=-1)
-    before = after - steps
-    base = stretch(before[..., pieces.starts], pieces)
-    return before - base, after - base
+    before = sums_before(steps, pieces)
+    before -= stretch(before[..., pieces.starts], pieces)
+    return before, before + steps
 
 
 def load_deformation(pieces: Pieces, spans: Spans, load: Gathered) -> Array:
@@ -281,10 +278,10 @@ class Recovery:
         """Displacements at each piece's left end, (6, n_cases, m)."""
         steps, length = self._steps, self.pieces.length
         left = np.empty_like(steps)
-        self._sum(steps[3:], self._u_node[3:], left[3:])
+        left[3:] = self._sum(steps[3:], self._u_node[3:])
         steps[1] += left[5] * length
         steps[2] -= left[4] * length
-        self._sum(steps[:3], self._u_node[:3], left[:3])
+        left[:3] = self._sum(steps[:3], self._u_node[:3])
         return left
 
     @cached_property
@@ -292,11 +289,11 @@ class Recovery:
         """Displacements at each piece's right end, (6, n_cases, m)."""
         return self.u_left + self._steps
 
-    def _sum(self, steps: Array, u_node: Array, left: Array) -> None:
+    def _sum(self, steps: Array, u_node: Array) -> Array:
         """Running sums from the spans' left nodes: values at the left ends."""
-        left[..., 0] = 0.0
-        np.cumsum(steps[..., :-1], axis=-1, out=left[..., 1:])
-        left += stretch(u_node - left[..., self.pieces.starts], self.pieces)
+        left = sums_before(steps, self.pieces)
+        left += stretch(u_node - left.take(self.pieces.starts, axis=-1), self.pieces)
+        return left
 
     @cached_property
     def _steps(self) -> Array:

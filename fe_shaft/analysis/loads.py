@@ -1,0 +1,159 @@
+"""Actions to nodal wrenches and distributed loads, and the statics that are known before any solution."""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+from typing import TYPE_CHECKING, NamedTuple
+
+import numpy as np
+from numpy.typing import NDArray
+
+from fe_shaft.analysis.discretise import load_edges
+from fe_shaft.errors import LoadError
+from fe_shaft.fem.dofs import NDOF
+from fe_shaft.fem.span import Gathered, Spans, end_load, gather_mass, gather_uniform, load_deformation
+from fe_shaft.model.actions import case_names, gravity_in_shaft
+from fe_shaft.units import show
+
+if TYPE_CHECKING:
+    from fe_shaft.analysis.discretise import Grid
+    from fe_shaft.model.actions import Action
+    from fe_shaft.model.system import Model
+
+Array = NDArray[np.float64]
+
+#: Torques that cancel to this share of what turns the shaft are balanced: rounding of a handful of products.
+BALANCED = 1e-9
+
+
+class Loads(NamedTuple):
+    """What acts on the grid.
+
+    Attributes
+    ----------
+    nodal : (n_nodes, 6, n_cases) [N, N m]
+        Point loads, and what spread loads and weights hand to the right nodes of their spans.
+    spread : pairs of a unit load and its density (n_spans, 6, n_cases or 1)
+        Spread loads [N/m, N m/m]; the shafts' own mass, with gravity for its density [m/s^2].
+    density : (n_spans, 6, n_cases) or None
+        Of the spread loads alone.
+    deformation : (n_spans, 6, n_cases) or None
+        Of the spans under all of these.
+    """
+
+    nodal: Array
+    spread: tuple[tuple[Gathered, Array], ...]
+    density: Array | None
+    deformation: Array | None
+
+
+def apply_loads(model: Model, grid: Grid, spans: Spans, actions: Sequence[Action]) -> Loads:
+    """Put all actions and the shafts' own weight on the grid."""
+    n_cases = len(case_names(model))
+    nodal = np.zeros((len(grid.x), NDOF, n_cases))
+    families: list[tuple[Gathered, Array]] = []
+    density = _spread(grid, actions, nodal)
+    if density is not None:
+        families.append((gather_uniform(grid.pieces), density))
+    if model.gravity_vector.any():
+        families.append((gather_mass(grid.pieces), _gravity(model, grid)))
+    if not families:
+        return Loads(nodal, (), density, None)
+    deformation = np.zeros((len(grid.left), NDOF, n_cases))
+    for load, of_spans in families:
+        nodal[grid.right] += end_load(load, grid.pieces) @ of_spans
+        deformation += load_deformation(grid.pieces, spans, load) @ of_spans
+    return Loads(nodal, tuple(families), density, deformation)
+
+
+def _spread(grid: Grid, actions: Sequence[Action], nodal: Array) -> Array | None:
+    """Point loads go to their nodes; spread ones become densities of the spans under them."""
+    density = None
+    for action in actions:
+        if action.spread <= 0:
+            nodal[grid.node_of[action.part]] += action.wrench.T
+            continue
+        if density is None:
+            density = np.zeros((len(grid.left), NDOF, nodal.shape[2]))
+        own = grid.shafts[action.shaft]
+        first, last = load_edges(action, float(grid.x[own.nodes][-1]))
+        middle = (grid.x[grid.left[own.spans]] + grid.x[grid.right[own.spans]]) / 2
+        under = own.spans.start + np.flatnonzero((middle > first) & (middle < last))
+        density[under] += _about((first + last) / 2, action).T / (last - first)
+    return density
+
+
+def _about(x: float, action: Action) -> Array:
+    """Wrench of an action about another place on the axis, (n_cases, 6)."""
+    wrench = action.wrench.copy()
+    lever = action.x - x
+    wrench[:, 4] -= lever * wrench[:, 2]
+    wrench[:, 5] += lever * wrench[:, 1]
+    return wrench
+
+
+def _gravity(model: Model, grid: Grid) -> Array:
+    density = np.zeros((len(grid.left), NDOF, 1))
+    for name, own in grid.shafts.items():
+        density[own.spans, :3, 0] = gravity_in_shaft(model, name)
+    return density
+
+
+class Balance(NamedTuple):
+    """A torque that the tool takes out so that a shaft that can spin stays where it is."""
+
+    shaft: str
+    part: str
+    torque: Array
+
+
+def balance_torque(model: Model, spinning: set[str]) -> list[Balance]:
+    """Find the torque that is left over on each shaft that can spin, and the part that takes it out.
+
+    Raises
+    ------
+    LoadError
+        Where nothing takes it out.
+    """
+    out, sentences = [], []
+    for shaft in spinning:
+        statics = model.statics[shaft]
+        left_over = statics.resultant[3]
+        for k in np.flatnonzero(np.abs(left_over) > BALANCED * statics.turning):
+            part = _taker(model, shaft, int(k))
+            if part is None:
+                sentences.append(_cannot_stand(model, shaft, int(k), float(left_over[k])))
+                continue
+            torque = np.zeros(len(left_over))
+            torque[k] = -left_over[k]
+            out.append(Balance(shaft, part, torque))
+    if sentences:
+        raise LoadError("\n".join(sentences))
+    return out
+
+
+def _taker(model: Model, shaft: str, k: int) -> str | None:
+    """The part of a shaft at which torque leaves in case k; the tool balances there."""
+    if not model.cases:
+        return None
+    names = [name for name in model.cases[k].leaves_shares if model.places[name].shaft == shaft]
+    return names[0] if names else None
+
+
+def _cannot_stand(model: Model, shaft: str, k: int, torque: float) -> str:
+    way = "clockwise" if torque > 0 else "counterclockwise"
+    return (
+        f"case {case_names(model)[k]}: {shaft} can spin, and {show(abs(torque), 'N m')} turn it {way} (seen from its "
+        "left end) while nothing takes that torque out.\n"
+        '  Write in the case where it leaves (leaves = "..."), or let a support hold "spin".'
+    )
+
+
+def twist_reference(model: Model, grid: Grid, shaft: str) -> tuple[int, list[str | None]]:
+    """Node at which the spin of a free shaft is held, and the part from which twist is counted in each case."""
+    names: list[str | None] = []
+    for case in model.cases or (None,):
+        here = [n for n in case.leaves_shares if model.places[n].shaft == shaft] if case is not None else []
+        names.append(here[0] if here else None)
+    held = next((n for n in names if n is not None), None)
+    return (grid.shafts[shaft].nodes.start if held is None else grid.node_of[held]), names

@@ -1,0 +1,121 @@
+"""Solution to results: all stations, the parts by their names, the proof and the notes."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator
+from functools import partial
+from typing import TYPE_CHECKING
+
+import numpy as np
+from numpy.typing import NDArray
+
+from fe_shaft.analysis.proof import prove
+from fe_shaft.analysis.reactions import Reactions, reactions
+from fe_shaft.analysis.solution import Solved, counted_twist, solve_model
+from fe_shaft.errors import LoadError
+from fe_shaft.fem.dofs import UX
+from fe_shaft.fem.span import Recovery
+from fe_shaft.model.actions import X_AXIS, case_names, clock, gravity_in_shaft
+from fe_shaft.model.gear import Gear
+from fe_shaft.model.notes import Note
+from fe_shaft.results.line import Line
+from fe_shaft.results.movement import GearMovement, Movement, SupportMovement
+from fe_shaft.results.parts import PartsFound
+from fe_shaft.results.results import Results
+from fe_shaft.units import show
+
+if TYPE_CHECKING:
+    from fe_shaft.model.system import Model
+
+Array = NDArray[np.float64]
+
+#: A pull below this share of a stop's own forces is rounding.
+PULLED = 1e-9
+
+
+def solve_once(model: Model) -> Results:
+    """Solve a model as it stands: displacements, forces, proof; no bands and no verdicts."""
+    solved = solve_model(model)
+    carried = reactions(solved)
+    proof = prove(solved, carried)
+    if solved.table.stops:
+        _refuse_pulled_stops(solved, carried)
+    u = counted_twist(solved)
+    return Results(
+        model=model,
+        cases=case_names(model),
+        lines=_lines(solved, u),
+        parts=PartsFound(tuple(model.places), partial(_part, solved, carried, u)),
+        actions=solved.actions,
+        proof=proof,
+        balances=tuple(_balance_notes(solved)),
+    )
+
+
+def _part(solved: Solved, carried: Reactions, u: Array, name: str) -> Movement[Array]:
+    own = u[solved.grid.node_of[name]].T
+    if name in solved.table.names:
+        k = solved.table.names.index(name)
+        return SupportMovement(
+            name, own, np.zeros_like(own), carried.wrench[k].T, carried.relative(k).T, carried.seat(k).T
+        )
+    load = sum((a.wrench for a in solved.actions if a.part == name), start=np.zeros_like(own))
+    part = solved.model[name]
+    if not isinstance(part, Gear) or part.mate is None:
+        return Movement(name, own, load)
+    towards = clock(part.mate.si)
+    along = np.cross(X_AXIS, towards)
+    point = part.reference_diameter / 2 * towards
+    sense = np.array([case.sense for case in solved.model.cases] or [1], dtype=float)
+    return GearMovement(name, own, load, _triple(point), _triple(towards), _triple(along), sense)
+
+
+def _triple(vector: Array) -> tuple[float, float, float]:
+    x, y, z = (float(v) for v in vector)
+    return x, y, z
+
+
+def _refuse_pulled_stops(solved: Solved, carried: Reactions) -> None:
+    """A one-way stop pushes; a case that would make it pull needs clearances that this solution does not know."""
+    sentences = []
+    names, table = case_names(solved.model), solved.table
+    for k in np.flatnonzero(table.one_way):
+        pull = table.one_way[k] * carried.wrench[k, UX]
+        pulled = np.flatnonzero(pull > PULLED * np.abs(carried.wrench[k, :3]).sum(axis=0))
+        if len(pulled):
+            word = "stops_left" if table.one_way[k] < 0 else "stops_right"
+            sentences.append(
+                f"case {names[pulled[0]]}: {table.names[k]} {word} only, but {show(float(pull[pulled[0]]), 'N')} pull "
+                'it the other way. Let it hold "axial", or turn the load.'
+            )
+    if sentences:
+        raise LoadError("\n".join(sentences))
+
+
+def _lines(solved: Solved, u: Array) -> dict[str, Line]:
+    grid, loads = solved.grid, solved.loads
+    found = Recovery(
+        grid.pieces, solved.give, solved.spans.centre, u[grid.left], solved.solution.span_force, loads.spread
+    )
+    return {
+        name: Line(
+            found=found,
+            own=own.pieces,
+            span_left=grid.x[grid.left],
+            end=(float(grid.x[own.nodes.stop - 1]), u[own.nodes.stop - 1]),
+            density=loads.density,
+            gravity=gravity_in_shaft(solved.model, name),
+        )
+        for name, own in grid.shafts.items()
+    }
+
+
+def _balance_notes(solved: Solved) -> Iterator[Note]:
+    names = case_names(solved.model)
+    for balance in solved.balances:
+        for k in np.flatnonzero(balance.torque):
+            torque = show(abs(float(balance.torque[k])), "N m")
+            yield Note(
+                f"{names[k]}.leaves",
+                f"case {names[k]}: {torque} taken out at {balance.part} so that the torques on {balance.shaft} balance",
+            )

@@ -1,0 +1,160 @@
+"""Grid to results: one linear solution of a model in all its load cases, with its proof."""
+
+from __future__ import annotations
+
+from typing import TYPE_CHECKING, NamedTuple
+
+import numpy as np
+from numpy.typing import NDArray
+
+from fe_shaft.analysis.discretise import Grid, discretise
+from fe_shaft.analysis.loads import Balance, Loads, apply_loads, balance_torque, twist_reference
+from fe_shaft.analysis.motions import require_held
+from fe_shaft.analysis.supports import SupportPlan, plan_supports
+from fe_shaft.fem.assembly import Constraint, reduce
+from fe_shaft.fem.dofs import NDOF, RX
+from fe_shaft.fem.linear import Network, Solution, solve
+from fe_shaft.fem.span import Flexibility, Spans, condense, flexibility
+from fe_shaft.model.actions import Action, case_names
+
+if TYPE_CHECKING:
+    from fe_shaft.model.support_table import SupportTable
+    from fe_shaft.model.system import Model
+
+Array = NDArray[np.float64]
+
+#: Axial loads below this share of the loads do not decide which one-way stop acts: rounding of thrusts that cancel.
+NO_PUSH = 1e-9
+
+
+_SPIN = np.arange(NDOF) == RX
+_NO_MOTION = np.zeros(NDOF)
+
+
+class Solved(NamedTuple):
+    """Everything between a model and its results.
+
+    Attributes
+    ----------
+    plan : springs and constraints of the supports
+    solution : of all cases, in the model's order
+    offset : (n_nodes, 6, 1)
+        Prescribed displacements.
+    balances : torques that the tool takes out
+    spinning : shafts whose spin nothing holds
+    """
+
+    model: Model
+    actions: tuple[Action, ...]
+    grid: Grid
+    give: Flexibility
+    spans: Spans
+    loads: Loads
+    table: SupportTable
+    plan: SupportPlan
+    solution: Solution
+    offset: Array
+    balances: list[Balance]
+    spinning: set[str]
+
+
+def solve_model(model: Model) -> Solved:
+    """Solve a model once.
+
+    Raises
+    ------
+    FreeMotionError, LoadError
+        In words, before anything is solved.
+    SolutionError
+        Where the matrix cannot be factored.
+    """
+    acts, table = model.actions, model.support_table
+    grid = discretise(model, acts)
+    give = flexibility(grid.pieces)
+    spans = condense(grid.pieces, give, grid.length)
+    loads = apply_loads(model, grid, spans, acts)
+    groups = _groups(model)
+    spinning: set[str] = set()
+    for push, cases in groups:
+        spinning |= require_held(model, push, cases)
+    balances = balance_torque(model, spinning)
+    for balance in balances:
+        loads.nodal[grid.node_of[balance.part], RX] += balance.torque
+    solved = [
+        _solve_group(model, grid, spans, loads, plan_supports(table, grid, push), cases, spinning)
+        for push, cases in groups
+    ]
+    plan, solution, offset = _merge(solved, [cases for _, cases in groups])
+    return Solved(model, acts, grid, give, spans, loads, table, plan, solution, offset, balances, spinning)
+
+
+def _groups(model: Model) -> list[tuple[dict[str, int], NDArray[np.intp]]]:
+    """Cases that share their supports: one-way stops act against the axial load of their shaft."""
+    table, statics = model.support_table, model.statics
+    every = np.arange(len(case_names(model)))
+    if not table.stops:
+        return [(dict.fromkeys(statics, 0), every)]
+    one_way = {shaft for shaft, way in zip(table.shafts, table.one_way, strict=True) if way}
+    signs = {
+        name: np.where(np.abs(of.resultant[0]) > NO_PUSH * of.size, np.sign(of.resultant[0]), 0.0) * (name in one_way)
+        for name, of in statics.items()
+    }
+    keys = [tuple(int(signs[name][k]) for name in statics) for k in every]
+    return [
+        (dict(zip(statics, key, strict=True)), np.array([k for k in every if keys[k] == key]))
+        for key in dict.fromkeys(keys)
+    ]
+
+
+def _solve_group(
+    model: Model,
+    grid: Grid,
+    spans: Spans,
+    loads: Loads,
+    plan: SupportPlan,
+    cases: NDArray[np.intp],
+    spinning: set[str],
+) -> tuple[SupportPlan, Solution, Array]:
+    held = list(plan.constraints)
+    for shaft in spinning:
+        node, _ = twist_reference(model, grid, shaft)
+        held.append(Constraint(node, 0.0, _SPIN, _NO_MOTION))
+    reduction = reduce(plan.n_nodes, held)
+    network = Network(plan.n_nodes, spans, grid.left, grid.right, plan.springs, reduction)
+    nodal, deformation = loads.nodal, loads.deformation
+    if len(cases) < nodal.shape[2]:
+        nodal, deformation = nodal[..., cases], None if deformation is None else deformation[..., cases]
+    if plan.n_nodes > len(nodal):
+        nodal = np.concatenate([nodal, np.zeros((plan.n_nodes - len(nodal), *nodal.shape[1:]))])
+    solution = solve(network, nodal, deformation)
+    return plan, solution, reduction.offset.reshape(-1, NDOF, 1)
+
+
+def _merge(
+    solved: list[tuple[SupportPlan, Solution, Array]], cases: list[NDArray[np.intp]]
+) -> tuple[SupportPlan, Solution, Array]:
+    """Put the cases of all groups back into the model's order; the springs are the same ones in every group."""
+    if len(solved) == 1:
+        return solved[0]
+    order = np.argsort(np.concatenate(cases))
+
+    def join(arrays: list[Array]) -> Array:
+        return np.concatenate(arrays, axis=-1)[..., order]
+
+    parts = [solution for _, solution, _ in solved]
+    corrections = [join([s.correction[k] for s in parts]) for k in (0, 1)]
+    arrays = {name: join([getattr(s, name) for s in parts]) for name in Solution._fields if name != "correction"}
+    solution = Solution(**arrays, correction=(corrections[0], corrections[1], parts[0].correction[2]))
+    return solved[0][0], solution, solved[0][2]
+
+
+def counted_twist(solved: Solved) -> Array:
+    """Displacements (n_nodes, 6, n_cases) with twist counted from where torque leaves."""
+    grid, u = solved.grid, solved.solution.u
+    for shaft in solved.spinning:
+        _, names = twist_reference(solved.model, grid, shaft)
+        shift = np.array([0.0 if name is None else u[grid.node_of[name], RX, k] for k, name in enumerate(names)])
+        if shift.any():
+            u = u.copy() if u is solved.solution.u else u
+            u[grid.shafts[shaft].nodes, RX] -= shift
+    return u

@@ -1,0 +1,76 @@
+"""The public verbs: solve a model, compare it with rigid pins or with another model."""
+
+from __future__ import annotations
+
+from dataclasses import replace
+from typing import TYPE_CHECKING
+
+from fe_shaft.analysis.bands import solve_mixes
+from fe_shaft.analysis.recovery import solve_once
+from fe_shaft.analysis.verdicts import judge
+from fe_shaft.errors import FreeMotionError, LoadError, UsageError
+from fe_shaft.results.comparison import Comparison, common_rows
+
+if TYPE_CHECKING:
+    from fe_shaft.model.system import Model
+    from fe_shaft.results.results import Results
+
+
+def solve(model: Model) -> Results:
+    """Solve a model in all its load cases.
+
+    Limits are judged as given and over the band of all estimates.
+
+    Raises
+    ------
+    FreeMotionError, LoadError
+        Something can move freely, or a load cannot be carried.
+    SolutionError
+        The proof failed; no numbers are returned.
+    """
+    results = solve_once(model)
+    if not model.limits:
+        return results
+    return replace(results, verdicts=judge(results, _on_pins(model), solve_mixes(model)))
+
+
+def _on_pins(model: Model) -> Results | None:
+    try:
+        return solve_once(model.pinned())
+    except (FreeMotionError, LoadError):
+        return None
+
+
+def compare(model: Model, other: Model | None = None) -> Comparison:
+    """Hold a model against itself on rigid pins, or against another model.
+
+    Every flexible bearing and seat is replaced by a rigid pin that holds the same directions.
+
+    Raises
+    ------
+    UsageError
+        Two models without a common case.
+    """
+    if other is not None:
+        return _compare_models(model, other)
+    results = solve_once(model)
+    try:
+        left = solve_once(model.pinned())
+    except (FreeMotionError, LoadError) as error:
+        raise type(error)(
+            f"on rigid pins, {error}\n  The bearings' tilt stiffness alone holds it; pins need more."
+        ) from None
+    mixes = solve_mixes(model)
+    results = replace(results, verdicts=judge(results, left, mixes))
+    return Comparison(left, results, ("pins", "bearings"), common_rows(left, results, mixes), mixes)
+
+
+def _compare_models(model: Model, other: Model) -> Comparison:
+    left, right = solve(model), solve(other)
+    if left.cases != right.cases:
+        raise UsageError(
+            f"the two models have different cases ({', '.join(left.cases)} against {', '.join(right.cases)}); "
+            "give both the same."
+        )
+    titles = ("first", "second")
+    return Comparison(left, right, titles, common_rows(left, right, None), None, tuple(model.differences(other)))

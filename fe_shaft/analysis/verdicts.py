@@ -1,0 +1,89 @@
+"""Limits held against results."""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+from typing import TYPE_CHECKING
+
+import numpy as np
+from numpy.typing import NDArray
+
+from fe_shaft.results.comparison import Mixes
+from fe_shaft.results.verdict import Band, Verdict
+
+if TYPE_CHECKING:
+    from fe_shaft.model.limit import Limit
+    from fe_shaft.results.results import Results
+
+Array = NDArray[np.float64]
+
+
+def judge(results: Results, pins: Results | None, mixes: Mixes | None) -> tuple[Verdict, ...]:
+    """Hold all limits of a model against its results."""
+    return tuple(_judge(limit, results, pins, mixes) for limit in results.model.limits)
+
+
+def _judge(limit: Limit, results: Results, pins: Results | None, mixes: Mixes | None) -> Verdict:
+    model = results.model
+    parts = list(model.targets(limit.name))
+    cases = [results.case_number(name) for name in model.limit_cases(limit.name)]
+    bounds = _Bounds(limit)
+    values = bounds.values(results, parts, cases)
+    use = bounds.use(values)
+    part, case = (int(k) for k in np.unravel_index(use.argmax(), use.shape))
+    alone = None if pins is None else float(bounds.values(pins, parts, cases)[part, case])
+    return Verdict(
+        limit=limit.name,
+        part=parts[part],
+        quantity=limit.quantity,
+        case=results.cases[cases[case]],
+        value=float(values[part, case]),
+        least=bounds.least,
+        most=bounds.most,
+        use=float(use[part, case]),
+        per_case={results.cases[c]: float(use[:, k].max()) for k, c in enumerate(cases)},
+        source=limit.source or "",
+        counting=limit.counting,
+        band=None if mixes is None else _band(bounds, mixes, parts, cases),
+        shaft_alone=alone,
+    )
+
+
+class _Bounds:
+    """What a limit allows: a largest size, a least size, or a range."""
+
+    def __init__(self, limit: Limit) -> None:
+        self.quantity = limit.quantity
+        self.most = None if limit.max is None else limit.max.si
+        self.least = None if limit.min is None else limit.min.si
+
+    def values(self, results: Results, parts: Sequence[str], cases: list[int]) -> Array:
+        """What is held against the bounds, (n_parts, n_cases)."""
+        values = np.array([np.asarray(results.parts[name].value(self.quantity)) for name in parts])[:, cases]
+        return values if self.most is not None and self.least is not None else np.abs(values)
+
+    def use(self, values: Array) -> Array:
+        """Above 1 where the limit is exceeded."""
+        if self.most is not None and self.least is None:
+            return np.asarray(values / self.most)
+        if self.most is None or self.least is None:
+            with np.errstate(divide="ignore"):
+                return np.asarray((self.least or 0.0) / values)
+        return np.abs(values - (self.most + self.least) / 2) / ((self.most - self.least) / 2)
+
+
+def _band(bounds: _Bounds, mixes: Mixes, parts: Sequence[str], cases: list[int]) -> Band:
+    def governing(results: Results) -> tuple[float, float]:
+        values = bounds.values(results, parts, cases)
+        use = bounds.use(values)
+        return float(values.flat[use.argmax()]), float(use.max())
+
+    each = [governing(mix.results) for mix in mixes.corners]
+    worst = max(range(len(each)), key=lambda k: each[k][1])
+    return Band(
+        all_low=governing(mixes.low.results)[0],
+        all_high=governing(mixes.high.results)[0],
+        worst=each[worst][0],
+        worst_use=each[worst][1],
+        mix=mixes.corners[worst].words,
+    )
