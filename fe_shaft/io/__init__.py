@@ -1,0 +1,1 @@
+"""Files in and out: model files, tables, fields for viewers."""
