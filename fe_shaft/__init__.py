@@ -11,7 +11,9 @@ first.
 from importlib import import_module
 from typing import TYPE_CHECKING, Any
 
-__version__ = "0.1.0"
+from fe_shaft.version import VERSION
+
+__version__ = VERSION
 
 #: Where each public name lives; loaded when first used, so that `import fe_shaft` costs nothing.
 _HOME = {

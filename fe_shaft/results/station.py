@@ -8,6 +8,7 @@ from dataclasses import dataclass
 import numpy as np
 from numpy.typing import NDArray
 
+from fe_shaft.results.extremes import largest_along
 from fe_shaft.results.line import Line
 from fe_shaft.results.movement import Movement, Number
 
@@ -71,10 +72,8 @@ class ShaftResults:
         return Station(place, u[:, 0], np.zeros_like(u[:, 0]), x, force[:, 0])
 
     def largest(self, quantity: str) -> tuple[Array, Array]:
-        """Largest value along the shaft and its place, (n_cases,) each; deflection, slope or bending_moment."""
-        values = getattr(self.line, quantity)
-        k = values.argmax(axis=1)
-        return values.max(axis=1), self.line.x[k]
+        """Largest value along the shaft and its place, (n_cases,) each; deflection, slope, bending_moment or torque."""
+        return largest_along(self.line, quantity)
 
 
 @dataclass(frozen=True)

@@ -1,0 +1,203 @@
+"""Tables of results with their units in the headings, for spreadsheets and data frames."""
+
+from __future__ import annotations
+
+import csv
+import io
+import math
+from collections.abc import Iterable, Iterator, Sequence
+from dataclasses import dataclass
+from typing import TYPE_CHECKING, Any
+
+import numpy as np
+from numpy.typing import NDArray
+
+from fe_shaft.errors import UsageError, nearest
+from fe_shaft.model.groups import noun
+from fe_shaft.results.movement import SupportMovement
+from fe_shaft.results.quantity import QUANTITIES
+from fe_shaft.results.shown import Shown
+
+if TYPE_CHECKING:
+    from fe_shaft.results.comparison import Comparison
+    from fe_shaft.results.results import Results
+
+Array = NDArray[np.float64]
+Cell = str | float | None
+_FORMULA = ("=", "+", "-", "@", "\t", "\r")  # what spreadsheets take for the start of a formula
+_FORCES = ("up_force", "front_force", "axial_force", "radial_force", "force", "tilt_moment")
+
+
+@dataclass(frozen=True)
+class Table:
+    """Rows of words and numbers.
+
+    Attributes
+    ----------
+    columns : headings; a number's unit stands behind its name: "deflection_um"
+    rows : one cell a column; None where a quantity does not apply
+    """
+
+    columns: tuple[str, ...]
+    rows: tuple[tuple[Cell, ...], ...]
+
+    def __len__(self) -> int:
+        return len(self.rows)
+
+    def __iter__(self) -> Iterator[tuple[Cell, ...]]:
+        return iter(self.rows)
+
+    def column(self, name: str) -> tuple[Cell, ...]:
+        """All cells of a column, by its heading."""
+        if name not in self.columns:
+            raise UsageError(f'the table has no column "{name}". {nearest(name, self.columns)}'.rstrip())
+        k = self.columns.index(name)
+        return tuple(row[k] for row in self.rows)
+
+    def to_csv(self) -> str:
+        """The table as CSV text (RFC 4180 with plain line feeds, decimal points); numbers with all their digits.
+
+        Words that a spreadsheet would take for a formula get an apostrophe in front.
+        """
+        text = io.StringIO()
+        writer = csv.writer(text, lineterminator="\n")
+        writer.writerow([_harmless(name) for name in self.columns])
+        writer.writerows([_cell(cell) for cell in row] for row in self.rows)
+        return text.getvalue()
+
+    def to_dataframe(self) -> Any:
+        """The table as a pandas DataFrame.
+
+        Raises
+        ------
+        UsageError
+            pandas is not installed.
+        """
+        try:
+            import pandas as pd
+        except ImportError:
+            raise UsageError(
+                'a DataFrame needs pandas, which is not installed. Run   pip install "fe_shaft[table]"'
+            ) from None
+        return pd.DataFrame(list(self.rows), columns=list(self.columns))
+
+
+def _cell(cell: Cell) -> str:
+    if cell is None:
+        return ""
+    if isinstance(cell, str):
+        return _harmless(cell)
+    return repr(cell + 0.0) if math.isfinite(cell) else ""  # + 0.0: no minus zero
+
+
+def _harmless(text: str) -> str:
+    """Words as words; zero characters, which no spreadsheet reads, are left out."""
+    text = text.replace("\0", "")
+    return f"'{text}" if text.startswith(_FORMULA) else text
+
+
+def movement_table(results: Results) -> Table:
+    """All quantities of all parts: one row a part and case, in the units the model asks for."""
+    shown = Shown.of(results.model)
+    kinds = [part.quantities() for part in results.parts.values()]
+    wanted = [name for name in QUANTITIES if any(name in quantities for quantities in kinds)]
+    columns = ("case", "part", "kind", "shaft", f"x_{shown.suffix('along')}", *map(shown.heading, wanted))
+    rows = _rows_of_parts(results, shown, list(results.parts), wanted)
+    return Table(columns, tuple(rows))
+
+
+def force_table(results: Results) -> Table:
+    """What the supports carry, ON the shaft: one row a support and case."""
+    shown = Shown.of(results.model)
+    supports = [name for name, part in results.parts.items() if isinstance(part, SupportMovement)]
+    columns = ("case", "part", "kind", "shaft", f"x_{shown.suffix('along')}", *map(shown.heading, _FORCES))
+    return Table(columns, tuple(_rows_of_parts(results, shown, supports, _FORCES)))
+
+
+def _rows_of_parts(
+    results: Results, shown: Shown, names: Sequence[str], quantities: Sequence[str]
+) -> Iterator[tuple[Cell, ...]]:
+    """One row a part and case, case by case."""
+    model = results.model
+    values = {name: _shown_values(results, shown, name, quantities) for name in names}
+    for k, case in enumerate(results.cases):
+        for name in names:
+            place = model.places[name]
+            x = place.x / shown.factor("along")
+            cells = (None if array is None else float(array[k]) for array in values[name])
+            yield (case, name, noun(model[name]), place.shaft, x, *cells)
+
+
+def _shown_values(results: Results, shown: Shown, name: str, quantities: Sequence[str]) -> list[Array | None]:
+    part = results.parts[name]
+    own = set(part.quantities())
+    return [
+        np.asarray(part.value(key)) / shown.factor(QUANTITIES[key].dimension) if key in own else None
+        for key in quantities
+    ]
+
+
+def station_table(results: Results) -> Table:
+    """Every station of every shaft: movements, and section forces just left and just right of it.
+
+    The section forces N, V (towards 12 and 3 o'clock), T, M act on the face that looks to the right; M_up turns about
+    the 12 o'clock axis, M_front about the 3 o'clock axis.
+    """
+    shown = Shown.of(results.model)
+    movement = ("axial", "up", "front", "twist", "deflection", "slope")
+    force, moment = shown.suffix("force"), shown.suffix("moment")
+    sections = [(f"{name}_{side}", dimension) for side in ("left", "right") for name, dimension in _SECTION]
+    columns = (
+        "case",
+        "shaft",
+        f"x_{shown.suffix('along')}",
+        *map(shown.heading, movement),
+        *(f"{name}_{force if dimension == 'force' else moment}" for name, dimension in sections),
+    )
+    rows: list[tuple[Cell, ...]] = []
+    for k, case in enumerate(results.cases):
+        for shaft, line in results.lines.items():
+            x = line.x / shown.factor("along")
+            u = line.u[k] / np.repeat([shown.factor("length"), shown.factor("angle")], 3)
+            radial, slope = line.deflection[k] / shown.factor("length"), line.slope[k] / shown.factor("angle")
+            scale = np.repeat([shown.factor("force"), shown.factor("moment")], 3)
+            left, right = line.force_left[k] / scale, line.force_right[k] / scale
+            numbers = np.column_stack([x, u[:, :4], radial, slope, left, right])
+            rows += [(case, shaft, *row) for row in numbers.tolist()]
+    return Table(columns, tuple(rows))
+
+
+_SECTION = (
+    ("axial_force", "force"),
+    ("shear_up", "force"),
+    ("shear_front", "force"),
+    ("torque", "moment"),
+    ("moment_up", "moment"),
+    ("moment_front", "moment"),
+)
+
+
+def comparison_table(comparison: Comparison) -> Table:
+    """Both results side by side: one row a part, quantity and case, each with its unit."""
+    shown = Shown.of(comparison.right.model)
+    left, right = (title.replace(" ", "_") for title in comparison.titles)
+    with_band = comparison.mixes is not None
+    band = ("all_low", "all_high", "worst", "worst_mix") if with_band else ()
+    columns = ("case", "part", "quantity", "unit", left, right, "difference", "ratio", "share", *band)
+    rows: list[tuple[Cell, ...]] = []
+    for row in comparison.rows:
+        unit = shown.unit(row.quantity)
+        factor = shown.factor(QUANTITIES[row.quantity].dimension)
+        arrays: list[Iterable[float] | None] = [row.left / factor, row.right / factor, row.difference / factor]
+        arrays += [row.ratio, row.share]
+        if with_band:
+            arrays += [None if each is None else each / factor for each in (row.low, row.high, row.worst)]
+        columns_of = [[None] * len(comparison.cases) if each is None else _finite(each) for each in arrays]
+        for k, case in enumerate(comparison.cases):
+            mix = (row.worst_mix[k] if row.worst_mix else None,) if with_band else ()
+            rows.append((case, row.part, row.quantity, unit, *(cells[k] for cells in columns_of), *mix))
+    return Table(columns, tuple(rows))
+
+
+def _finite(values: Iterable[float]) -> list[float | None]:
+    return [float(value) if math.isfinite(value) else None for value in values]

@@ -1,0 +1,1 @@
+"""Results in words and fixed-width tables: names, layout, then one file a block of the printed page."""
