@@ -32,6 +32,7 @@ parts = [shaft, left, right, wheel, pinion, handwheel]
 
 model = fs.Model("Layshaft of the compost drum drive", parts, cases, limits=[limit], gravity="down")
 results = fs.solve(model)
+comparison = fs.compare(model)
 print(results)  # what `fe-shaft solve` prints
-print(fs.compare(model))  # pins beside bearings
-fs.picture(results, "layshaft.png")  # fs.view(results) opens the window
+print(comparison)  # pins beside bearings
+fs.picture(comparison, "layshaft.png")  # fs.view(comparison) opens the window
