@@ -25,7 +25,7 @@ from numpy.typing import NDArray
 
 from fe_shaft.model.gear import Gear
 from fe_shaft.model.helix import Helix
-from fe_shaft.model.loads import Coupling, Force, Pulley, Sprocket
+from fe_shaft.model.loads import BeltPull, Coupling, Force, Pulley, Sprocket
 from fe_shaft.model.part import Heavy, Spread
 
 if TYPE_CHECKING:
@@ -152,23 +152,31 @@ def _torque(model: Model, coupling: Coupling, torque: Array) -> Action:
 def _pull(model: Model, wheel: Pulley | Sprocket, torque: Array | None) -> Action | None:
     """Belt or chain pull on a shaft, and the torque it goes with.
 
-    A belt with both strands given pulls sqrt(F1^2 + F2^2 - 2 F1 F2 cos(wrap)) (the two strands as vectors);
-    else the shaft load is pull_factor times the effective pull T / r (common practice, no source).
+    Where both strands of a belt are given they pull as vectors (`_strands`); else the shaft load is pull_factor times
+    the effective pull T / r, towards the other wheel (common practice, no source).
     """
-    n = len(case_names(model))
-    turning = np.zeros(n) if torque is None else torque
-    belt = wheel.belt_pull if isinstance(wheel, Pulley) else None
-    if belt is not None and isinstance(wheel, Pulley):
-        tight, slack = belt.tight.si, belt.slack.si
-        pull = np.full(n, math.sqrt(tight**2 + slack**2 - 2 * tight * slack * math.cos(wheel.wrap.si)))
+    turning = np.zeros(len(case_names(model))) if torque is None else torque
+    towards = clock(wheel.pulls_towards.si)
+    if isinstance(wheel, Pulley) and wheel.belt_pull is not None:
+        force = _strands(wheel, wheel.belt_pull, towards, turning)
     elif torque is None:
         return None
     else:
-        pull = (
-            (1.0 if wheel.pull_factor is None else wheel.pull_factor) * np.abs(turning) / (wheel.reference_diameter / 2)
-        )
-    force = pull[:, None] * clock(wheel.pulls_towards.si)
+        factor = 1.0 if wheel.pull_factor is None else wheel.pull_factor
+        force = (factor * np.abs(turning) / (wheel.reference_diameter / 2))[:, None] * towards
     return _act(model, wheel, "pull", np.zeros(3), force, turning[:, None] * X_AXIS)
+
+
+def _strands(pulley: Pulley, belt: BeltPull, towards: Array, turning: Array) -> Array:
+    """Both strands of a belt as vectors, (n_cases, 3).
+
+    Each strand leaves at an angle of (180 deg - wrap) / 2 to the line towards the other pulley; the tight one on the side
+    from which it turns the pulley the way it turns. Without a torque nothing says which side that is, and only the
+    part along that line counts.
+    """
+    tight, slack, lean = belt.tight.si, belt.slack.si, (math.pi - pulley.wrap.si) / 2
+    aside = -np.sign(turning)[:, None] * np.cross(X_AXIS, towards)
+    return (tight + slack) * math.cos(lean) * towards + (tight - slack) * math.sin(lean) * aside
 
 
 def _force(model: Model, force: Force) -> Action:

@@ -21,6 +21,7 @@ if TYPE_CHECKING:
     from fe_shaft.model.system import Model
 
 MOST_NAMED = 4  # names listed in one note
+BELT_MISMATCH = 0.05  # of the torque: what is not worth a note
 
 
 @dataclass(frozen=True)
@@ -120,19 +121,33 @@ def _cases(model: Model) -> Iterator[Note]:
     if not model.written_cases:
         yield Note("cases", f"no case is written: one case {model.cases[0].name}, all forces and weights, no power")
     for case in model.cases:
-        yield from _case(case)
+        yield from _case(model, case)
 
 
-def _case(case: Case) -> Iterator[Note]:
+def _case(model: Model, case: Case) -> Iterator[Note]:
     if "torque_factor" in case.given and case.torque_factor != 1.0:
         yield Note(
             f"{case.name}.torque_factor",
             f"torque_factor {case.torque_factor:g} multiplies power and torque, as K_A of ISO 6336-1 may: {case.name}",
         )
+    yield from _belts(model, case)
     one_way = [key for key in ("enters", "leaves") if key in case.given]
     if len(one_way) == 1:
         other = "leaves" if one_way[0] == "enters" else "enters"
         yield Note(f"{case.name}.{other}", f"power {one_way[0]}, but nothing says where it {other}: {case.name}")
+
+
+def _belts(model: Model, case: Case) -> Iterator[Note]:
+    """Strands whose difference does not go with the torque that passes."""
+    passing = case.enters_shares | case.leaves_shares
+    for pulley in model.pulleys:
+        if pulley.belt_pull is None or pulley.name not in passing:
+            continue
+        own = (pulley.belt_pull.tight.si - pulley.belt_pull.slack.si) * pulley.reference_diameter / 2
+        torque = passing[pulley.name] * case.torque_si
+        if abs(own - torque) > BELT_MISMATCH * max(own, torque):
+            what = f"belt_pull of {pulley.name} goes with {show(own, 'N m')}, but {show(torque, 'N m')} pass it: {case.name}"
+            yield Note(f"{pulley.name}.belt_pull", what)
 
 
 def _faces(model: Model) -> Iterator[Note]:
