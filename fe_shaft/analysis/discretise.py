@@ -97,22 +97,16 @@ def _lay(model: Model, shaft: Shaft, stations: list[float]) -> _Laid:
     wanted = _distinct(stations, same)
     cuts = _distinct([*wanted, *_cone_cuts(arrays, bounds)], same) if arrays.tapered else wanted
     new = _off_bounds(bounds, np.array(cuts), same)
-    ends = np.concatenate([bounds, new])
-    ends.sort()
-    segment = _cut_segments(len(bounds) - 1, np.searchsorted(bounds, new) - 1)
+    ends, segment = bounds, np.arange(len(bounds) - 1)
+    if len(new):
+        ends = np.sort(np.concatenate([bounds, new]))
+        segment = segment.repeat(np.bincount(bounds.searchsorted(new) - 1, minlength=len(segment)) + 1)
     station = ends.searchsorted(np.array(wanted) - 2 * same)
     if not arrays.tapered:
         return _Laid(ends, station, segment, None)
     begin, length = bounds[segment], arrays.length[segment]
     first, last = (((edge - begin) / length).clip(0.0, 1.0) for edge in (ends[:-1], ends[1:]))
     return _Laid(ends, station, segment, (first, last))
-
-
-def _cut_segments(n: int, cut: Ints) -> Ints:
-    """The segment of each piece, where segments `cut` are cut once for each time they are listed."""
-    if not len(cut):
-        return np.arange(n)
-    return np.repeat(np.arange(n), np.bincount(cut, minlength=n) + 1)
 
 
 def _distinct(values: Iterable[float], same: float) -> list[float]:

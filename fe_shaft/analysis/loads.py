@@ -9,11 +9,11 @@ import numpy as np
 from numpy.typing import NDArray
 
 from fe_shaft.analysis.discretise import load_edges
+from fe_shaft.analysis.motion_words import spin_sentence
 from fe_shaft.errors import LoadError
 from fe_shaft.fem.dofs import NDOF
 from fe_shaft.fem.span import Gathered, Spans, end_load, gather_mass, gather_uniform, load_deformation
 from fe_shaft.model.actions import case_names, gravity_in_shaft
-from fe_shaft.units import show
 
 if TYPE_CHECKING:
     from fe_shaft.analysis.discretise import Grid
@@ -116,17 +116,19 @@ def balance_torque(model: Model, spinning: set[str]) -> list[Balance]:
         Where nothing takes it out.
     """
     out, sentences = [], []
-    for shaft in spinning:
+    for shaft in (each.name for each in model.shafts if each.name in spinning):
         statics = model.statics[shaft]
-        left_over = statics.resultant[3]
-        for k in np.flatnonzero(np.abs(left_over) > BALANCED * statics.turning):
-            part = _taker(model, shaft, int(k))
+        left_over, stuck = statics.resultant[3], {}
+        for k in np.flatnonzero(np.abs(left_over) > BALANCED * statics.turning).tolist():
+            part = _taker(model, shaft, k)
             if part is None:
-                sentences.append(_cannot_stand(model, shaft, int(k), float(left_over[k])))
+                stuck[k] = float(left_over[k])
                 continue
             torque = np.zeros(len(left_over))
             torque[k] = -left_over[k]
             out.append(Balance(shaft, part, torque))
+        if stuck:
+            sentences.append(spin_sentence(model, shaft, stuck))
     if sentences:
         raise LoadError("\n".join(sentences))
     return out
@@ -138,15 +140,6 @@ def _taker(model: Model, shaft: str, k: int) -> str | None:
         return None
     names = [name for name in model.cases[k].leaves_shares if model.places[name].shaft == shaft]
     return names[0] if names else None
-
-
-def _cannot_stand(model: Model, shaft: str, k: int, torque: float) -> str:
-    way = "clockwise" if torque > 0 else "counterclockwise"
-    return (
-        f"case {case_names(model)[k]}: {shaft} can spin, and {show(abs(torque), 'N m')} turn it {way} (seen from its "
-        "left end) while nothing takes that torque out.\n"
-        '  Write in the case where it leaves (leaves = "..."), or let a support hold "spin".'
-    )
 
 
 def twist_reference(model: Model, grid: Grid, shaft: str) -> tuple[int, list[str | None]]:

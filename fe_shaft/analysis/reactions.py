@@ -43,28 +43,30 @@ def reactions(solved: Solved) -> Reactions:
     wrench = np.zeros((len(table.names), NDOF, solution.u.shape[2]))
     wrench[plan.bearing] = -solution.spring_force[: len(plan.bearing)]
     if table.pins:
-        _pin_wrenches(solved, [solved.grid.node_of[name] for name in table.names], wrench)
+        for group, cases in solved.plans:
+            wrench[..., cases] += _pin_wrenches(solved, group.holding, solution.unbalanced[..., cases])
     return Reactions(solved, wrench)
 
 
-def _pin_wrenches(solved: Solved, nodes: list[int], wrench: Array) -> None:
-    """Reactions of pins: what is unbalanced at their nodes, in the directions they hold."""
-    table, holding = solved.table, solved.plan.holding.copy()
-    spinning = np.array([shaft in solved.spinning for shaft in table.shafts], dtype=bool)
-    holding[spinning, RX] = False
+def _pin_wrenches(solved: Solved, holding: NDArray[np.bool_], unbalanced: Array) -> Array:
+    """Reactions of pins, (n, 6, k): what is unbalanced at their nodes, in the directions they hold; 0 for bearings."""
+    table = solved.table
+    held = holding.copy()
+    held[[shaft in solved.spinning for shaft in table.shafts], RX] = False
+    wrench = np.zeros((len(table.names), NDOF, unbalanced.shape[2]))
     together: dict[int, list[int]] = {}
-    for k in np.flatnonzero(table.pin):
-        together.setdefault(nodes[k], []).append(int(k))
+    for k in np.flatnonzero(table.pin).tolist():
+        together.setdefault(solved.grid.node_of[table.names[k]], []).append(k)
     for node, pins in together.items():
-        at_node = solved.solution.unbalanced[node]
         if len(pins) == 1:
-            wrench[pins[0]] = _at_centre(at_node, table.centre[pins[0]]) * holding[pins[0]][:, None]
+            wrench[pins[0]] = _at_centre(unbalanced[node], table.centre[pins[0]]) * held[pins[0]][:, None]
             continue
-        rows = np.concatenate([table.links[k][holding[k]] for k in pins])
-        share = np.linalg.lstsq(rows.T, at_node, rcond=None)[0]
+        rows = np.concatenate([table.links[k][held[k]] for k in pins])
+        share = np.linalg.lstsq(rows.T, unbalanced[node], rcond=None)[0]
         for pin in pins:
-            count = int(holding[pin].sum())
-            wrench[pin][holding[pin]], share = share[:count], share[count:]
+            count = int(held[pin].sum())
+            wrench[pin][held[pin]], share = share[:count], share[count:]
+    return wrench
 
 
 def _at_centre(wrench: Array, centre: float) -> Array:

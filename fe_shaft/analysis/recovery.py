@@ -9,6 +9,7 @@ from typing import TYPE_CHECKING
 import numpy as np
 from numpy.typing import NDArray
 
+from fe_shaft.analysis.motion_words import pulled_stop_sentence
 from fe_shaft.analysis.proof import prove
 from fe_shaft.analysis.reactions import Reactions, reactions
 from fe_shaft.analysis.solution import Solved, counted_twist, solve_model
@@ -78,16 +79,13 @@ def _triple(vector: Array) -> tuple[float, float, float]:
 def _refuse_pulled_stops(solved: Solved, carried: Reactions) -> None:
     """A one-way stop pushes; a case that would make it pull needs clearances that this solution does not know."""
     sentences = []
-    names, table = case_names(solved.model), solved.table
+    model, table = solved.model, solved.table
     for k in np.flatnonzero(table.one_way):
         pull = table.one_way[k] * carried.wrench[k, UX]
-        pulled = np.flatnonzero(pull > PULLED * np.abs(carried.wrench[k, :3]).sum(axis=0))
-        if len(pulled):
-            word = "stops_left" if table.one_way[k] < 0 else "stops_right"
-            sentences.append(
-                f"case {names[pulled[0]]}: {table.names[k]} {word} only, but {show(float(pull[pulled[0]]), 'N')} pull "
-                'it the other way. Let it hold "axial", or turn the load.'
-            )
+        pull = np.where(pull > PULLED * np.abs(carried.wrench[k, :3]).sum(axis=0), pull, 0.0)
+        if pull.any():
+            case = int(pull.argmax())
+            sentences.append(pulled_stop_sentence(model, model.supports[k], float(pull[case]), case))
     if sentences:
         raise LoadError("\n".join(sentences))
 

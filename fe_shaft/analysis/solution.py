@@ -13,7 +13,7 @@ from fe_shaft.analysis.motions import require_held
 from fe_shaft.analysis.supports import SupportPlan, plan_supports
 from fe_shaft.fem.assembly import Constraint, reduce
 from fe_shaft.fem.dofs import NDOF, RX
-from fe_shaft.fem.linear import Network, Solution, solve
+from fe_shaft.fem.linear import Network, Solution, solve, weighed_correction
 from fe_shaft.fem.span import Flexibility, Spans, condense, flexibility
 from fe_shaft.model.actions import Action, case_names
 
@@ -36,7 +36,8 @@ class Solved(NamedTuple):
 
     Attributes
     ----------
-    plan : springs and constraints of the supports
+    plans : springs and constraints of the supports in each group of cases, with the numbers of these; springs and
+        nodes are the same in all
     solution : of all cases, in the model's order
     offset : (n_nodes, 6, 1)
         Prescribed displacements.
@@ -51,11 +52,16 @@ class Solved(NamedTuple):
     spans: Spans
     loads: Loads
     table: SupportTable
-    plan: SupportPlan
+    plans: list[tuple[SupportPlan, NDArray[np.intp]]]
     solution: Solution
     offset: Array
     balances: list[Balance]
     spinning: set[str]
+
+    @property
+    def plan(self) -> SupportPlan:
+        """Of the first group: for what is the same in all."""
+        return self.plans[0][0]
 
 
 def solve_model(model: Model) -> Solved:
@@ -80,12 +86,10 @@ def solve_model(model: Model) -> Solved:
     balances = balance_torque(model, spinning)
     for balance in balances:
         loads.nodal[grid.node_of[balance.part], RX] += balance.torque
-    solved = [
-        _solve_group(model, grid, spans, loads, plan_supports(table, grid, push), cases, spinning)
-        for push, cases in groups
-    ]
-    plan, solution, offset = _merge(solved, [cases for _, cases in groups])
-    return Solved(model, acts, grid, give, spans, loads, table, plan, solution, offset, balances, spinning)
+    plans = [(plan_supports(table, grid, push), cases) for push, cases in groups]
+    solved = [_solve_group(model, grid, spans, loads, plan, cases, spinning) for plan, cases in plans]
+    solution = solved[0][0] if len(solved) == 1 else _merge([each for each, _ in solved], [cases for _, cases in plans])
+    return Solved(model, acts, grid, give, spans, loads, table, plans, solution, solved[0][1], balances, spinning)
 
 
 def _groups(model: Model) -> list[tuple[dict[str, int], NDArray[np.intp]]]:
@@ -114,7 +118,7 @@ def _solve_group(
     plan: SupportPlan,
     cases: NDArray[np.intp],
     spinning: set[str],
-) -> tuple[SupportPlan, Solution, Array]:
+) -> tuple[Solution, Array]:
     held = list(plan.constraints)
     for shaft in spinning:
         node, _ = twist_reference(model, grid, shaft)
@@ -126,26 +130,22 @@ def _solve_group(
         nodal, deformation = nodal[..., cases], None if deformation is None else deformation[..., cases]
     if plan.n_nodes > len(nodal):
         nodal = np.concatenate([nodal, np.zeros((plan.n_nodes - len(nodal), *nodal.shape[1:]))])
-    solution = solve(network, nodal, deformation)
-    return plan, solution, reduction.offset.reshape(-1, NDOF, 1)
+    return solve(network, nodal, deformation), reduction.offset.reshape(-1, NDOF, 1)
 
 
-def _merge(
-    solved: list[tuple[SupportPlan, Solution, Array]], cases: list[NDArray[np.intp]]
-) -> tuple[SupportPlan, Solution, Array]:
-    """Put the cases of all groups back into the model's order; the springs are the same ones in every group."""
-    if len(solved) == 1:
-        return solved[0]
+def _merge(solutions: list[Solution], cases: list[NDArray[np.intp]]) -> Solution:
+    """Put the cases of all groups back into the model's order."""
     order = np.argsort(np.concatenate(cases))
 
     def join(arrays: list[Array]) -> Array:
         return np.concatenate(arrays, axis=-1)[..., order]
 
-    parts = [solution for _, solution, _ in solved]
-    corrections = [join([s.correction[k] for s in parts]) for k in (0, 1)]
-    arrays = {name: join([getattr(s, name) for s in parts]) for name in Solution._fields if name != "correction"}
-    solution = Solution(**arrays, correction=(corrections[0], corrections[1], parts[0].correction[2]))
-    return solved[0][0], solution, solved[0][2]
+    arrays = {name: join([getattr(s, name) for s in solutions]) for name in Solution._fields if name != "correction"}
+    weighed = [weighed_correction(solution) for solution in solutions]
+    longest = max(len(step) for step, _ in weighed)
+    padded = [[np.pad(each, ((0, longest - len(each)), (0, 0))) for each in pair] for pair in weighed]
+    steps, totals = (join([pair[k] for pair in padded]) for k in (0, 1))
+    return Solution(**arrays, correction=(steps, totals, np.ones(longest)))
 
 
 def counted_twist(solved: Solved) -> Array:

@@ -9,6 +9,7 @@ from fe_shaft.analysis.bands import solve_mixes
 from fe_shaft.analysis.recovery import solve_once
 from fe_shaft.analysis.verdicts import judge
 from fe_shaft.errors import FreeMotionError, LoadError, UsageError
+from fe_shaft.model.differences import differences
 from fe_shaft.results.comparison import Comparison, common_rows
 
 if TYPE_CHECKING:
@@ -58,7 +59,7 @@ def compare(model: Model, other: Model | None = None) -> Comparison:
         left = solve_once(model.pinned())
     except (FreeMotionError, LoadError) as error:
         raise type(error)(
-            f"on rigid pins, {error}\n  The bearings' tilt stiffness alone holds it; pins need more."
+            f'on rigid pins, {error}\n  (A pin holds what "holds" says; a stiffness that is not held is none there.)'
         ) from None
     mixes = solve_mixes(model)
     results = replace(results, verdicts=judge(results, left, mixes))
@@ -73,4 +74,4 @@ def _compare_models(model: Model, other: Model) -> Comparison:
             "give both the same."
         )
     titles = ("first", "second")
-    return Comparison(left, right, titles, common_rows(left, right, None), None, tuple(model.differences(other)))
+    return Comparison(left, right, titles, common_rows(left, right, None), None, differences(model, other))

@@ -24,6 +24,10 @@ Array = NDArray[np.float64]
 Bools = NDArray[np.bool_]
 
 
+#: A scaled eigenvalue below this is none: rounding is 1e-16, the softest real seat is 1e-10 of the stiffest bearing.
+IDLE = 1e-12
+
+
 class SupportPlan(NamedTuple):
     """Supports as springs and constraints between nodes.
 
@@ -89,6 +93,22 @@ def _springs(
         node_b=np.concatenate([far[bearing], np.full(len(on_seat), ground)]),
         b_a=np.concatenate([table.links[bearing], unit[: len(on_seat)]]),
         b_b=unit,
-        stiffness=np.concatenate([laws[bearing], *(table.seats[k][0][None] for k in on_seat)]),
+        stiffness=np.concatenate([laws[bearing], *(_seat_law(laws[k], *table.seats[k])[None] for k in on_seat)]),
         gap=np.concatenate([gap[bearing], table.gap[on_seat]]),
     )
+
+
+def _seat_law(bearing: Array, seat: Array, rigid: Bools) -> Array:
+    """Stiffness of a seat, made definite where neither seat nor bearing resists the outer ring.
+
+    Nothing pulls at the ring there, so what is added carries no force; it only keeps the ring in its place.
+    """
+    if seat.diagonal()[~rigid].all() and np.count_nonzero(seat) == np.count_nonzero(seat.diagonal()):
+        return seat
+    both = (bearing + seat)[np.ix_(~rigid, ~rigid)]
+    size = np.sqrt(np.where(both.diagonal() > 0, both.diagonal(), 1.0))
+    values, vectors = np.linalg.eigh(both / np.outer(size, size))
+    loose = vectors[:, values < IDLE] * size[:, None]
+    out = seat.copy()
+    out[np.ix_(~rigid, ~rigid)] += loose @ loose.T
+    return out

@@ -72,7 +72,10 @@ class Solution(NamedTuple):
     @property
     def digits_lost(self) -> Array:
         """Decimal digits by which the first solution missed the final one, (n_cases,)."""
-        return _lost(*self.correction)
+        step, total = weighed_correction(self)
+        size = np.abs(total).max(axis=0, initial=np.finfo(float).tiny)
+        missed = np.abs(step).max(axis=0, initial=0.0) / size
+        return np.asarray(np.log10(np.maximum(missed / np.finfo(float).eps, 1.0)))
 
 
 def solve(network: Network, load: Array, span_load: Array | None = None) -> Solution:
@@ -236,9 +239,8 @@ def _residual(free: Array, turning: NDArray[np.bool_], s: Array, length: float) 
     return np.asarray(left.max(axis=0, initial=0.0) / largest.max(axis=0))
 
 
-def _lost(correction: Array, q: Array, diagonal: Array) -> Array:
-    """Digits lost, displacements weighed by the forces that they stand for."""
+def weighed_correction(solution: Solution) -> tuple[Array, Array]:
+    """The last correction and the free displacements, weighed by the forces that they stand for."""
+    step, total, diagonal = solution.correction
     weigh = np.sqrt(diagonal)[:, None]
-    missed = np.abs(weigh * correction).max(axis=0, initial=0.0)
-    size = np.abs(weigh * q).max(axis=0, initial=np.finfo(float).tiny)
-    return np.asarray(np.log10(np.maximum(missed / size / np.finfo(float).eps, 1.0)))
+    return weigh * step, weigh * total

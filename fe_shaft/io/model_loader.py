@@ -12,6 +12,7 @@ from fe_shaft.model.address import address
 from fe_shaft.model.changing import Changing, leaves
 from fe_shaft.model.groups import GROUPS
 from fe_shaft.model.kinds import thing
+from fe_shaft.model.refusal import problem
 from fe_shaft.model.system import Model
 from fe_shaft.model.words import Fault
 
@@ -217,7 +218,7 @@ class Loader:
             path = work.change(place, value, (SET, place))
             if path is not None:
                 self.where[path] = (SET, None)
-        self.problems += [Problem(str(fault.path[1]), fault.sentence, SET) for fault in work.faults]
+        self.problems += [problem(str(fault.path[1]), fault.sentence, SET) for fault in work.faults]
         self.tables = work.tables
 
     # ---- lines
@@ -235,11 +236,11 @@ class Loader:
         lines = source.toml.lines
         line = next((lines[path[:n]] for n in range(len(path), 0, -1) if path[:n] in lines), None)
         place = path[1:] if path[0] in ("change", "add") and len(path) > 1 else path
-        self.problems.append(Problem(address(_without_index(place)), sentence, source.shown, line))
+        self.problems.append(problem(address(_without_index(place)), sentence, source.shown, line))
 
     def _problem(self, fault: Fault) -> Problem:
         """A mistake in the tables, with file and line."""
-        return Problem(address(fault.path, self.tables), fault.sentence, *self.find(fault.path))
+        return problem(address(fault.path, self.tables), fault.sentence, *self.find(fault.path))
 
     def find(self, path: Path) -> Where:
         """File and line of a path in the tables, or of the nearest table around it."""

@@ -12,9 +12,10 @@ from functools import cached_property
 from pathlib import Path
 from typing import Any
 
-from fe_shaft.errors import FileError, ModelError, Problem, quote
+from fe_shaft.errors import FileError, ModelError, quote
 from fe_shaft.io.toml_lines import TomlLines, scan
 from fe_shaft.io.toml_syntax import syntax_fault
+from fe_shaft.model.refusal import problem
 
 MOST_BYTES = 8_000_000
 _MANY_DIGITS = re.compile(r"[\d_]{640,}")  # the least number of digits that Python may be told to refuse
@@ -149,7 +150,7 @@ class Source:
 
     def error(self, line: int | None, sentence: str) -> ModelError:
         """A mistake of the file as a whole."""
-        return ModelError(Problem("", sentence, self.shown, line))
+        return ModelError(problem("", sentence, self.shown, line))
 
 
 class _NotRegularError(Exception):

@@ -7,7 +7,7 @@ from typing import Any
 
 from fe_shaft.model.groups import GROUPS
 from fe_shaft.model.shaft import inside_shaft
-from fe_shaft.model.words import Named
+from fe_shaft.model.words import Named, joined
 
 
 def address(path: tuple[str | int, ...], source: Iterable[Named] | Mapping[str, Any] = ()) -> str:
@@ -26,12 +26,12 @@ def address(path: tuple[str | int, ...], source: Iterable[Named] | Mapping[str, 
         E.g. ``layshaft.wheel_seat.length``; a segment without a name by its number from 1.
     """
     if not path or path[0] not in GROUPS or len(path) < 2:
-        return ".".join(str(step) for step in path)
+        return joined(path)
     group, name, *rest = path
     inside = tuple(rest)
     if group == "shafts":
-        return ".".join([str(name), *inside_shaft(_segments(str(name), source), inside)])
-    return ".".join(str(step) for step in (name, *inside))
+        return joined([name, *inside_shaft(_segments(str(name), source), inside)])
+    return joined([name, *inside])
 
 
 def _segments(name: str, source: Iterable[Named] | Mapping[str, Any]) -> Any:

@@ -5,10 +5,11 @@ from __future__ import annotations
 from collections.abc import Iterable, Iterator, Mapping, Sequence
 from typing import Any
 
-from fe_shaft.errors import ModelError, Problem, nearest, quote
+from fe_shaft.errors import ModelError, nearest, quote
 from fe_shaft.model.groups import GROUPS
 from fe_shaft.model.heading import Heading
 from fe_shaft.model.kinds import thing
+from fe_shaft.model.refusal import problem
 from fe_shaft.model.words import Fault, Words, example_of, inner_noun, tables_of
 
 Path = tuple[str | int, ...]
@@ -106,22 +107,26 @@ class Changing:
             return self._write(self.tables, Heading, (), steps, value, where)
         group, name = path
         table[name] = tables_of(table[name])
-        if group == "shafts" and len(steps) > 1 and steps[0] not in GROUPS["shafts"].model_fields:
-            return self._set_segment(table[name], path, steps, value, where)
+        if group == "shafts" and steps[0] not in GROUPS["shafts"].model_fields:
+            rows = table[name].get("segments")
+            rows = list(rows) if isinstance(rows, Sequence) and not isinstance(rows, str) else []
+            if len(steps) > 1 or steps[0] in map(_name_of, rows):
+                table[name]["segments"] = rows
+                return self._set_segment(rows, path, steps, value, where)
         return self._write(table[name], GROUPS[group], path, steps, value, where)
 
     def _set_segment(
-        self, shaft: dict[str, Any], path: tuple[str, ...], steps: list[str], value: Any, where: Path
+        self, rows: list[Any], path: tuple[str, ...], steps: list[str], value: Any, where: Path
     ) -> Path | None:
-        rows = shaft.get("segments")
-        rows = list(rows) if isinstance(rows, Sequence) and not isinstance(rows, str) else []
-        names = [row.get("name") if isinstance(row, Mapping) else getattr(row, "name", None) for row in rows]
+        names = [_name_of(row) for row in rows]
         if steps[0] not in names:
             self.faults.append(Fault(where, _no_segment(path[1], steps[0], [name for name in names if name])))
             return None
+        if len(steps) == 1:
+            self.faults.append(Fault(where, f"{'.'.join((path[1], *steps))} is a whole segment. Name a key in it."))
+            return None
         index = names.index(steps[0])
         rows[index] = tables_of(rows[index])
-        shaft["segments"] = rows
         segment = inner_noun(GROUPS["shafts"], "segments")
         assert segment is not None
         return self._write(rows[index], segment, (*path, "segments", index), steps[1:], value, where)
@@ -182,7 +187,7 @@ class Changing:
     def _remove_segment(self, shaft: str, segment: str, where: Path) -> Path | None:
         table = tables_of(self.tables["shafts"][shaft])
         rows = list(table.get("segments", ()))
-        names = [row.get("name") if isinstance(row, Mapping) else getattr(row, "name", None) for row in rows]
+        names = [_name_of(row) for row in rows]
         if segment not in names:
             self.faults.append(Fault(where, _no_segment(shaft, segment, [name for name in names if name])))
             return None
@@ -206,6 +211,12 @@ class Changing:
             content[name] = table
 
 
+def _name_of(row: object) -> str | None:
+    """The name of a segment, as a noun or as a table."""
+    name = row.get("name") if isinstance(row, Mapping) else getattr(row, "name", None)
+    return name if isinstance(name, str) else None
+
+
 def _no_segment(shaft: str, name: str, known: list[str]) -> str:
     if name.startswith("segment_") and name[8:].isdigit():
         return f'{shaft}.{name} has no name, so no address. Name it first: name = "..." in that segment.'
@@ -225,7 +236,7 @@ def changed(tables: Mapping[str, Any], changes: Mapping[str, Any]) -> dict[str, 
     for place, value in changes.items():
         work.change(str(place), value, (str(place),))
     if work.faults:
-        raise ModelError([Problem(str(fault.path[0]), fault.sentence) for fault in work.faults])
+        raise ModelError([problem(str(fault.path[0]), fault.sentence) for fault in work.faults])
     return work.tables
 
 

@@ -126,7 +126,7 @@ class Gear(Heavy):
                 ("pitch_cone_angle",), f"{cone.text} is more than 90 deg. Write the half angle of the pitch cone."
             )
         outer = self._outer_diameter
-        if self._mean_by_facewidth and cone and outer and self.facewidth and not (self._mean(outer) or 0.0) > 0.0:
+        if cone and outer and self.facewidth and 2.0 * self.facewidth.si * math.sin(cone.si) >= outer:
             yield Fault(("facewidth",), f"{self.facewidth.text} reaches to the tip of the pitch cone. Make it smaller.")
 
     @property

@@ -272,7 +272,8 @@ class Listed(Kind):
     @override
     def check(self, raw: Any) -> tuple[Any, ...]:
         if not isinstance(raw, list | tuple):
-            remedy = f'["{raw}"]' if isinstance(raw, str) and '"' not in raw and len(raw) < 40 else self.example
+            simple = isinstance(raw, str) and raw.isprintable() and '"' not in raw and len(raw) < 40
+            remedy = f'["{raw}"]' if simple else self.example
             raise refuse(f"{shown(raw)} is {thing(raw)}, not a list. Write {remedy}.")
         if len(raw) > LONGEST_LIST:
             raise refuse(f"the list has {len(raw)} entries; {LONGEST_LIST} at most are read.")

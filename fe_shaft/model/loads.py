@@ -136,7 +136,9 @@ class Pulley(Spread, Heavy):
     wrap: Wrap = Field(
         default=Value(math.pi, "180 deg"), description="Angle over which the belt wraps.", examples=["170 deg"]
     )
-    pulls_towards: Direction = Field(description="Direction in which the other pulley stands; the belt pulls that way.", examples=["7:30 o'clock"])
+    pulls_towards: Direction = Field(
+        description="Direction in which the other pulley stands; the belt pulls that way.", examples=["7:30 o'clock"]
+    )
 
     @override
     def faults_together(self) -> Iterator[Fault]:
@@ -176,7 +178,9 @@ class Sprocket(Spread, Heavy):
     pull_factor: Annotated[float, Factor(0.5, 10.0)] = Field(
         default=1.0, description="Pull on the shaft over the chain's circumferential force.", examples=[1.15]
     )
-    pulls_towards: Direction = Field(description="Direction in which the other wheel stands; the chain pulls that way.", examples=["1 o'clock"])
+    pulls_towards: Direction = Field(
+        description="Direction in which the other wheel stands; the chain pulls that way.", examples=["1 o'clock"]
+    )
 
     @override
     def faults_together(self) -> Iterator[Fault]:

@@ -11,7 +11,7 @@ from typing import Any, TypeVar
 import numpy as np
 from numpy.typing import NDArray
 
-from fe_shaft.errors import ModelError, Problem, nearest, quote
+from fe_shaft.errors import ModelError, nearest, quote
 from fe_shaft.model.assembly import Assembly
 from fe_shaft.model.case import Case
 from fe_shaft.model.frame import Frame, gravity_vector
@@ -23,6 +23,7 @@ from fe_shaft.model.loads import Coupling, Force, Mass, Pulley, Sprocket
 from fe_shaft.model.material import Material
 from fe_shaft.model.part import Heavy, Part
 from fe_shaft.model.position import Place, PositionKind
+from fe_shaft.model.refusal import problem
 from fe_shaft.model.shaft import SegmentArrays, Shaft
 from fe_shaft.model.support import Support
 from fe_shaft.units import Value
@@ -146,7 +147,7 @@ class Lookup:
         found = self._by_name.get(name)
         if found is None:
             raise ModelError(
-                Problem("", f"no part is called {quote(str(name))}. {nearest(str(name), self._by_name)}".rstrip())
+                problem("", f"no part is called {quote(str(name))}. {nearest(str(name), self._by_name)}".rstrip())
             )
         return found
 
@@ -163,7 +164,7 @@ class Lookup:
         """The case of that name, `like` followed; ModelError with the nearest name if there is none."""
         cases = self._assembly.cases
         if name not in cases:
-            raise ModelError(Problem("", f"no case is called {quote(str(name))}. {nearest(str(name), cases)}".rstrip()))
+            raise ModelError(problem("", f"no case is called {quote(str(name))}. {nearest(str(name), cases)}".rstrip()))
         return cases[name]
 
     # ---- where everything is
@@ -202,18 +203,18 @@ class Lookup:
         name = next(iter(shafts)) if shaft is None and len(shafts) == 1 else shaft
         if name not in shafts:
             what = "which shaft? " if name is None else f"no shaft is called {quote(str(name))}. "
-            raise ModelError(Problem("position", f"{what}{nearest(str(name), shafts) or 'Give its name.'}"))
+            raise ModelError(problem("position", f"{what}{nearest(str(name), shafts) or 'Give its name.'}"))
         try:
             position = PositionKind().check(text)
         except ValueError as error:
-            raise ModelError(Problem("position", str(error))) from None
+            raise ModelError(problem("position", str(error))) from None
         placing = self._assembly.placing
         count = len(placing.faults)
         x = placing.follow(position, name, None, "position")
         if x is None:
             fault = placing.faults[count]
             del placing.faults[count:]
-            raise ModelError(Problem("position", fault.sentence))
+            raise ModelError(problem("position", fault.sentence))
         return x
 
     def cg(self, name: str) -> tuple[float, float, float]:
@@ -231,7 +232,7 @@ class Lookup:
         """
         part = self[name]
         if not isinstance(part, Heavy) or part.mass is None:
-            raise ModelError(Problem(name, "it has no mass, so no centre of gravity. Write mass in it."))
+            raise ModelError(problem(name, "it has no mass, so no centre of gravity. Write mass in it."))
         radius = 0.0 if part.cg_radius is None else part.cg_radius.si
         angle = 0.0 if part.cg_angle is None else part.cg_angle.si
         return self._assembly.centres[name], radius * math.cos(angle), radius * math.sin(angle)

@@ -16,7 +16,7 @@ from fe_shaft.model.material import Material
 from fe_shaft.model.quantity import Coordinate, Quantity
 from fe_shaft.model.refusal import refuse
 from fe_shaft.model.segment import Segment, Shear
-from fe_shaft.model.words import Fault, Named
+from fe_shaft.model.words import Fault, Named, joined
 from fe_shaft.units import Value
 
 if TYPE_CHECKING:
@@ -190,7 +190,7 @@ class Shaft(Named):
     def place_of(cls, words: Mapping[str, Any], path: tuple[str | int, ...]) -> str:
         name = words.get("name")
         head = name if isinstance(name, str) and name else "shaft"
-        return ".".join([head, *inside_shaft(words.get("segments"), path)])
+        return joined([head, *inside_shaft(words.get("segments"), path)])
 
     @cached_property
     def lengths(self) -> Array:
@@ -243,8 +243,8 @@ class Shaft(Named):
 def running_sums(values: Array) -> Array:
     """Sums of the first 0, 1, ... n values, (n + 1,), each with its rounding errors added back.
 
-    Plain running sums of 4,000 lengths drift by 1e-13 of the whole and those of 1,000,000 by 2e-11, which moves supports
-    against shoulders ("Sum2" of Ogita, Rump and Oishi, 2005, SIAM J. Sci. Comput. 26).
+    Plain running sums of 4,000 lengths drift by 1e-13 of the whole and those of 1,000,000 by 2e-11, which moves
+    supports against shoulders ("Sum2" of Ogita, Rump and Oishi, 2005, SIAM J. Sci. Comput. 26).
     """
     sums = np.concatenate([[0.0], np.cumsum(values)])
     before, after = sums[:-1], sums[1:]

@@ -69,6 +69,11 @@ class Springs(Words):
         yield from either(self, "tilt", ("tilt_up", "tilt_front"))
 
     @property
+    def written_figures(self) -> set[str]:
+        """Keys of the figures that were written."""
+        return self.given - {"source", "range_check"}
+
+    @property
     def values(self) -> tuple[Value | None, ...]:
         """The six stiffnesses in the order ux uy uz rx ry rz; None where nothing is written."""
         return (
@@ -102,7 +107,7 @@ class Stiffness(Springs):
     @override
     def faults_together(self) -> Iterator[Fault]:
         yield from super().faults_together()
-        if not self.given - {"source", "range_check"}:
+        if not self.written_figures:
             yield Fault((), 'the table is empty. Write { radial = "93 N/um" }.')
 
 
@@ -237,7 +242,7 @@ class Seat(Springs):
     @override
     def faults_together(self) -> Iterator[Fault]:
         yield from super().faults_together()
-        single = self.given - {"source", "range_check", "matrix"}
+        single = self.written_figures - {"matrix"}
         if "matrix" in self.given and single:
             yield Fault(("matrix",), f"matrix stands beside {', '.join(sorted(single))}. Write one of them.")
         if not single and "matrix" not in self.given:

@@ -125,7 +125,7 @@ class Bearing(Support):
             )
         elif len(ways) == 2:
             yield Fault(("matrix",), "matrix stands beside stiffness. Write one of them.")
-        elif self.stiffness is not None:
+        elif self.stiffness is not None and self.stiffness.written_figures:
             yield from self._unbacked(self.stiffness)
 
     def _unbacked(self, stiffness: Stiffness) -> Iterator[Fault]:

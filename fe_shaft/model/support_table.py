@@ -95,14 +95,16 @@ class SupportTable:
         return {}
 
     def _held_directions(self, shaft: str, holding: Bools) -> Array:
-        rows = [np.zeros((0, 6))]
-        for k, law in enumerate(self.laws(holding)):
-            if self.shafts[k] == shaft:
-                own = np.eye(6)[holding[k]] if self.pin[k] else _stiff_directions(law)
-                if k in self.seats:
-                    own = _through_seat(own, *self.seats[k])
-                rows.append(own @ self.motion_links[k])
+        rows, laws = [np.zeros((0, 6))], self.laws(holding)
+        for k, name in enumerate(self.shafts):
+            if name == shaft:
+                rows.append(self.own_directions(k, holding[k], laws[k]) @ self.motion_links[k])
         return np.concatenate(rows)
+
+    def own_directions(self, k: int, holding: Bools, law: Array) -> Array:
+        """Directions in which support k holds the shaft at its load centre, (r, 6), its seat included."""
+        own = np.eye(6)[holding] if self.pin[k] else _stiff_directions(law)
+        return _through_seat(own, *self.seats[k]) if k in self.seats else own
 
     @cached_property
     def load_place(self) -> Array:
@@ -140,9 +142,9 @@ class SupportTable:
 
     def laws(self, holding: Bools) -> Array:
         """Stiffness of the bearings: an axial one counts only where the bearing holds the shaft axially."""
-        loose = ~holding[:, UX]
-        if not loose.any():
+        if not self.stops:  # a bearing's own law knows already what it holds both ways
             return self.law
+        loose = ~holding[:, UX]
         law = self.law.copy()
         law[loose, UX, :] = law[loose, :, UX] = 0.0
         return law

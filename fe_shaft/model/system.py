@@ -9,7 +9,7 @@ from functools import cached_property
 from types import MappingProxyType
 from typing import TYPE_CHECKING, Any, Self, Unpack
 
-from fe_shaft.errors import ModelError, Problem, nearest, quote
+from fe_shaft.errors import ModelError, nearest, quote
 from fe_shaft.model.actions import Action
 from fe_shaft.model.actions import actions as actions_of
 from fe_shaft.model.address import address
@@ -25,9 +25,11 @@ from fe_shaft.model.limit import Limit
 from fe_shaft.model.lookup import Lookup
 from fe_shaft.model.material import Material
 from fe_shaft.model.notes import Note, notes_of
+from fe_shaft.model.refusal import problem
 from fe_shaft.model.shaft import Shaft
 from fe_shaft.model.statics import Statics
 from fe_shaft.model.statics import statics as statics_of
+from fe_shaft.model.summary import summary, summary_html
 from fe_shaft.model.support import Bearing, Support
 from fe_shaft.model.support_table import SupportTable, tabulate
 from fe_shaft.model.variants import End, at_end, housing_at_end, pin_of, seated
@@ -125,7 +127,7 @@ class Model(Lookup):
     # ---- frozen
 
     def __setattr__(self, key: str, value: object) -> None:
-        raise ModelError(Problem(key, "a model does not change. Write model.change({...}), which returns a new one."))
+        raise ModelError(problem(key, "a model does not change. Write model.change({...}), which returns a new one."))
 
     def __delattr__(self, key: str) -> None:
         self.__setattr__(key, None)
@@ -185,7 +187,7 @@ class Model(Lookup):
         for name in ends:
             if name not in self.estimated:
                 hint = nearest(name, self.estimated)
-                raise ModelError(Problem(name, f"nothing about {quote(name)} is estimated. {hint}".rstrip()))
+                raise ModelError(problem(name, f"nothing about {quote(name)} is estimated. {hint}".rstrip()))
         housing = self.housing
         if housing is not None and HOUSING in ends:
             housing = housing_at_end(housing, ends[HOUSING])
@@ -247,6 +249,12 @@ class Model(Lookup):
         text = json.dumps(table, sort_keys=True, ensure_ascii=True, separators=(",", ":"))
         return hashlib.sha256(text.encode()).hexdigest()
 
+    def __str__(self) -> str:
+        return summary(self)
+
+    def _repr_html_(self) -> str:
+        return summary_html(self)
+
     def __repr__(self) -> str:
         return f"Model({quote(self.title)}, {len(self.shafts)} shafts, {len(self.parts_on_shafts)} parts)"
 
@@ -259,7 +267,7 @@ _CACHED = frozenset(
 def _raise(faults: Sequence[Fault], source: Any) -> None:
     """ModelError with every fault, if there is one."""
     if faults:
-        raise ModelError([Problem(address(fault.path, source), fault.sentence) for fault in faults])
+        raise ModelError([problem(address(fault.path, source), fault.sentence) for fault in faults])
 
 
 def _list_faults(key: str, given: object, classes: tuple[type[Named], ...]) -> list[Fault]:

@@ -6,16 +6,16 @@ A noun in which something is wrong can still be salvaged: what is readable serve
 that a file tells all its mistakes at once.
 """
 
-from collections.abc import Iterator, Mapping
+from collections.abc import Iterable, Iterator, Mapping
 from inspect import Parameter, Signature
 from typing import TYPE_CHECKING, Annotated, Any, ClassVar, NamedTuple, Self, get_origin
 
 from pydantic import ConfigDict, Field, TypeAdapter, ValidationError, ValidationInfo, model_validator
 from pydantic_core import InitErrorDetails
 
-from fe_shaft.errors import ModelError, Problem
+from fe_shaft.errors import ModelError, quote
 from fe_shaft.model.kinds import Choice, Text, shown, thing
-from fe_shaft.model.refusal import refuse, sentence_of
+from fe_shaft.model.refusal import problem, refuse, sentence_of
 from fe_shaft.model.symbols import meant_key, unknown_key
 from fe_shaft.units import Value
 
@@ -68,10 +68,10 @@ class Words(BaseModel):
         if len(args) > len(self.positional):
             several = ", ".join(self.positional) or "nothing"
             what = f"{len(args)} values without a key; only {several} may stand without. Write key = value."
-            raise ModelError(Problem(type(self).__name__, what))
+            raise ModelError(problem(type(self).__name__, what))
         for key, value in zip(self.positional, args, strict=False):
             if key in words:
-                raise ModelError(Problem(type(self).__name__, f"{key} is given twice. Leave one out."))
+                raise ModelError(problem(type(self).__name__, f"{key} is given twice. Leave one out."))
             words[key] = value
         try:
             self.__pydantic_validator__.validate_python(words, self_instance=self, context=_context())
@@ -79,7 +79,7 @@ class Words(BaseModel):
             faults = faults_of(error)
         else:
             return
-        raise ModelError([Problem(self.place_of(words, fault.path), fault.sentence) for fault in faults])
+        raise ModelError([problem(self.place_of(words, fault.path), fault.sentence) for fault in faults])
 
     __init__.__pydantic_base_init__ = True  # type: ignore[attr-defined] # nested tables are validated natively
 
@@ -103,7 +103,7 @@ class Words(BaseModel):
             super().__setattr__(key, value)
             return
         raise ModelError(
-            Problem(self.place_of(self.__dict__, (key,)), "a part of a model does not change. Make a new one.")
+            problem(self.place_of(self.__dict__, (key,)), "a part of a model does not change. Make a new one.")
         )
 
     @model_validator(mode="wrap")
@@ -162,7 +162,7 @@ class Words(BaseModel):
         """Address of a value inside this noun, as a script sees it."""
         name = words.get("name")
         head = name if isinstance(name, str) and name else cls.__name__.lower()
-        return ".".join([head, *(str(step) for step in path)])
+        return joined([head, *path])
 
     @property
     def given(self) -> set[str]:
@@ -242,6 +242,12 @@ class Named(Words):
     positional: ClassVar[tuple[str, ...]] = ("name",)
     if TYPE_CHECKING:
         name: Any  # text; a segment's may be None
+
+
+def joined(steps: Iterable[str | int]) -> str:
+    """Steps of an address, fit to be printed."""
+    texts = map(str, steps)
+    return ".".join(text if text.isprintable() and len(text) <= 60 else quote(text) for text in texts)
 
 
 def written(value: Any) -> Any:

@@ -24,7 +24,7 @@ if TYPE_CHECKING:
 
 Array = NDArray[np.float64]
 Cell = str | float | None
-_FORMULA = ("=", "+", "-", "@", "\t", "\r")  # what spreadsheets take for the start of a formula
+_FORMULA = ("=", "+", "-", "@", "\t", "\n")  # what spreadsheets take for the start of a formula
 _FORCES = ("up_force", "front_force", "axial_force", "radial_force", "force", "tilt_moment")
 
 
@@ -91,8 +91,8 @@ def _cell(cell: Cell) -> str:
 
 
 def _harmless(text: str) -> str:
-    """Words as words; zero characters, which no spreadsheet reads, are left out."""
-    text = text.replace("\0", "")
+    """Words as words; line ends are line feeds, and zero characters, which no spreadsheet reads, are left out."""
+    text = text.replace("\0", "").replace("\r\n", "\n").replace("\r", "\n")
     return f"'{text}" if text.startswith(_FORMULA) else text
 
 

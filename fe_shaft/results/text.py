@@ -63,7 +63,7 @@ def comparison_text(comparison: Comparison, case: str | None = None) -> str:
     """
     results = comparison.right
     k = results.case_number(case if case is not None else governing_case(results))
-    blocks = [*comparison_lines(comparison, k), other_cases(results, [k], every=False)]
+    blocks = [*comparison_lines(comparison, k), other_cases(results, [k])]
     return "\n".join("\n".join(lines) + "\n" for lines in blocks if lines).rstrip()
 
 
@@ -89,7 +89,7 @@ def _verdicts(page: Page, *, listed: bool) -> list[str]:
     return lines
 
 
-def other_cases(results: Results, chosen: Sequence[int], *, every: bool = True) -> list[str]:
+def other_cases(results: Results, chosen: Sequence[int]) -> list[str]:
     """How to see the cases that are not shown."""
     others = [plain(name) for k, name in enumerate(results.cases) if k not in chosen]
     if not others:
@@ -97,7 +97,7 @@ def other_cases(results: Results, chosen: Sequence[int], *, every: bool = True) 
     named = [f"--case {name}" for name in others[:_MOST_CASES_NAMED]]
     if len(others) > _MOST_CASES_NAMED:
         named.append(f"and {len(others) - _MOST_CASES_NAMED} more")
-    return labelled("Other cases:", [*named, *["--case all"] * every], between=", ")
+    return labelled("Other cases:", [*named, "--case all"], between=", ")
 
 
 def _last(page: Page, k: int) -> list[str]:

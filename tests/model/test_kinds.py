@@ -125,15 +125,19 @@ def test_accepted(kind: Kind, raw: Any, value: Any) -> None:
             "width",
             '"width" is not possible here. Write "facewidth" or "point" or a length, as in "20 mm".',
         ),
-        (ClockAngle(), "13 o'clock", "\"13 o'clock\" is not on the clock. Write 1 to 12 o'clock, such as \"4:30 o'clock\"."),
-        (ClockAngle(), "up", "\"up\" is not a direction on the clock. Write \"12 o'clock\"."),
+        (
+            ClockAngle(),
+            "13 o'clock",
+            '"13 o\'clock" is not on the clock. Write 1 to 12 o\'clock, such as "4:30 o\'clock".',
+        ),
+        (ClockAngle(), "up", '"up" is not a direction on the clock. Write "12 o\'clock".'),
         (ClockAngle(), "9", '"9": hours or degrees? Write "9 o\'clock" or "9 deg".'),
         (ClockAngle(), 9, '9 has no unit. Write "9 deg". Or write "9 o\'clock".'),
         (ClockAngle(), "721 deg", '"721 deg" is more than two turns. Write 0 to 360 deg.'),
         (
             ClockAngle(),
             ["3 o'clock", "9 o'clock"],
-            "a list of directions is not known yet in this version. Write one, such as \"9 o'clock\".",
+            'a list of directions is not known yet in this version. Write one, such as "9 o\'clock".',
         ),
         (
             Turning(),
@@ -174,7 +178,9 @@ def test_reserved_names(name: str) -> None:
 
 
 def test_clock_angles_run_clockwise_from_twelve() -> None:
-    angles = [ClockAngle().check(text).si for text in ("12 o'clock", "3 o'clock", "4:30 o'clock", "135 deg", "9 o'clock")]
+    angles = [
+        ClockAngle().check(text).si for text in ("12 o'clock", "3 o'clock", "4:30 o'clock", "135 deg", "9 o'clock")
+    ]
     assert angles == pytest.approx([0.0, 1.5707963267948966, 2.356194490192345, 2.356194490192345, 4.71238898038469])
 
 

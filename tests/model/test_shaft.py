@@ -33,7 +33,11 @@ def segment(name: str | None = None, **words: object) -> fs.Segment:
         ),
         ({"length": "0 mm"}, "s.length", '"0 mm" is not greater than 0. Write a positive value.'),
         ({"length": "-3 mm"}, "s.length", '"-3 mm" is not greater than 0. Write a positive value.'),
-        ({"length": "nan mm"}, "s.length", '"nan mm" is not a finite number. Write a number and a unit, as in "12 mm".'),
+        (
+            {"length": "nan mm"},
+            "s.length",
+            '"nan mm" is not a finite number. Write a number and a unit, as in "12 mm".',
+        ),
         ({"length": float("inf")}, "s.length", 'inf is not a finite number. Write a number and a unit, as in "12 mm".'),
         ({"length": "1e400 mm"}, "s.length", '"1e400 mm" is too large for a number. Check its exponent.'),
         ({"diameter": "20,5 mm"}, "s.diameter", '"20,5 mm" has a decimal comma. Write "20.5 mm".'),
@@ -99,12 +103,16 @@ def test_tolerance_classes_keep_the_nominal_value_and_the_text() -> None:
             "s.a.name",
             '"a" is segment 1 already. Choose another name.',
         ),
-        ({"segments": [segment("material")]}, "s.material.name", '"material" is a key of the shaft. Choose another name.'),
+        (
+            {"segments": [segment("material")]},
+            "s.material.name",
+            '"material" is a key of the shaft. Choose another name.',
+        ),
         ({"axis": "+Y"}, "s.twelve", 'a shaft along +Y has no upper side. Write twelve = "+Z".'),
         (
             {"axis": "-Z", "twelve": "+Z"},
             "s.twelve",
-            "12 o'clock cannot point along the axis (-Z). Write twelve = \"+Y\".",
+            '12 o\'clock cannot point along the axis (-Z). Write twelve = "+Y".',
         ),
         (
             {"left_end": "0 mm"},

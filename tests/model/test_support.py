@@ -40,7 +40,11 @@ def matrix(rows: object, **units: str) -> fs.Matrix:
             "b.stiffness",
             'stiffness is not written. Write stiffness = { radial = "93 N/um" }, or [pins.X] if it gives nothing way.',
         ),
-        ({"matrix": {"rows": DIAGONAL.tolist(), "units": UNITS}}, "b.matrix", "matrix stands beside stiffness. Write one of them."),
+        (
+            {"matrix": {"rows": DIAGONAL.tolist(), "units": UNITS}},
+            "b.matrix",
+            "matrix stands beside stiffness. Write one of them.",
+        ),
         (
             {"holds": ["radial", "axial"]},
             "b.stiffness.axial",
@@ -62,7 +66,11 @@ def matrix(rows: object, **units: str) -> fs.Matrix:
             "spin has no stiffness in a bearing. Leave spin out, or hold it by a pin or a matrix.",
         ),
         ({"stiffness": {}}, "b.stiffness", 'the table is empty. Write { radial = "93 N/um" }.'),
-        ({"stiffness": "93 N/um"}, "b.stiffness", '"93 N/um" is text, not a table. Write { radial = "~93 N/um", up = "120 N/um" }.'),
+        (
+            {"stiffness": "93 N/um"},
+            "b.stiffness",
+            '"93 N/um" is text, not a table. Write { radial = "~93 N/um", up = "120 N/um" }.',
+        ),
         (
             {"stiffness": {"radial": "93 N/um", "up": "93 N/um"}},
             "b.stiffness.radial",
@@ -128,7 +136,13 @@ def test_a_pin_gives_nothing_way() -> None:
 
 
 def test_stiffness_in_the_order_of_displacements() -> None:
-    stiffness = {"up": "3 N/um", "front": "2 N/um", "axial": "1 N/um", "tilt_up": "5 N m/mrad", "tilt_front": "4 N m/mrad"}
+    stiffness = {
+        "up": "3 N/um",
+        "front": "2 N/um",
+        "axial": "1 N/um",
+        "tilt_up": "5 N m/mrad",
+        "tilt_front": "4 N m/mrad",
+    }
     made = bearing(holds=["radial", "axial"], stiffness=stiffness)
     assert made.diagonal is not None
     assert made.diagonal.tolist() == [1e6, 3e6, 2e6, 0.0, 5e3, 4e3]
@@ -226,7 +240,9 @@ def test_a_script_reads_no_matrix_file() -> None:
 
 
 def test_estimates_have_a_band_and_its_ends() -> None:
-    made = bearing(stiffness={"radial": "~93 N/um", "tilt": {"value": "5 N m/mrad", "low": "4 N m/mrad", "high": "9 N m/mrad"}})
+    made = bearing(
+        stiffness={"radial": "~93 N/um", "tilt": {"value": "5 N m/mrad", "low": "4 N m/mrad", "high": "9 N m/mrad"}}
+    )
     assert made.estimated
     assert made.stiffness is not None
     low, high = made.stiffness.at_end("low"), made.stiffness.at_end("high")

@@ -141,8 +141,7 @@ def test_a_slip_of_units_is_switched_off_at_its_place_only() -> None:
     place, sentence = only(fs.Bearing, "b", **RADIAL, stiffness=slip)
     assert place == "b.stiffness.radial"
     assert sentence == (
-        '"93 N/m" is 0.000093 N/um; usual: 0.5 to 20000. Meant: N/um? '
-        '(to keep it: range_check = "off" in this table)'
+        '"93 N/m" is 0.000093 N/um; usual: 0.5 to 20000. Meant: N/um? (to keep it: range_check = "off" in this table)'
     )
     loose = {"range_check": "off"}
     for bearing in (

@@ -14,6 +14,7 @@ from fe_shaft.results.words.wording import listed, number
 if TYPE_CHECKING:
     from fe_shaft.results.comparison import Row
 
+MOST_NAMED = 6  # parts in one sentence
 CARES = 0.05  # relative: a reaction that changes less over the estimates hardly cares
 
 
@@ -45,10 +46,15 @@ def _worst_mixes(view: View) -> Iterator[str]:
             of = told.setdefault(mix_words(view.page, row.worst_mix[view.k]), {})
             of.setdefault(WORDS[row.quantity], []).append(view.page.names(24)[row.part])
     for mix, of in told.items():
-        yield f"Worst mix {mix}: {'; '.join(f'{what} of {listed(names)}' for what, names in of.items())}."
+        yield f"Worst mix {mix}: {'; '.join(f'{what} of {_few(names)}' for what, names in of.items())}."
     mixes = view.comparison.mixes
     if mixes is not None and not mixes.complete:
         yield f"({len(mixes.corners)} mixes solved: all alike, and each estimate alone against the others.)"
+
+
+def _few(names: Sequence[str]) -> str:
+    """Names in a sentence, the first ones of many."""
+    return listed(names if len(names) <= MOST_NAMED else [*names[:MOST_NAMED], f"{len(names) - MOST_NAMED} more"])
 
 
 def _indeterminate(view: View) -> Iterator[str]:

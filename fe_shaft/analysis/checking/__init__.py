@@ -1,0 +1,1 @@
+"""What `check` says: parts, cases, what was taken, and the printed text."""
