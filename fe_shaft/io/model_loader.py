@@ -6,6 +6,7 @@ from collections.abc import Iterator, Mapping
 from typing import Any
 
 from fe_shaft.errors import ModelError, Problem, nearest, quote
+from fe_shaft.io.model_lines import Origins, Path, SourceLines
 from fe_shaft.io.model_source import Source
 from fe_shaft.io.model_tables import matrix_rows, segments
 from fe_shaft.model.address import address
@@ -16,8 +17,6 @@ from fe_shaft.model.refusal import problem
 from fe_shaft.model.system import Model
 from fe_shaft.model.words import Fault
 
-Path = tuple[str | int, ...]
-Where = tuple[str, int | None]  # file as shown, line
 VARIANT_KEYS = ("format", "title", "question", "source", "extends", "include", "remove", "change", "add")
 INCLUDED = ("materials", "limits")
 LATER_INCLUDED = ("catalogue",)
@@ -36,24 +35,22 @@ class Loader:
 
     def __init__(self, source: Source) -> None:
         self.source = source
-        self.base = source  # the file at the end of `extends`; its lines are scanned when they are asked for
+        self.origins = Origins(source)
         self.tables: dict[str, Any] = {}
         self.faults: list[Fault] = []  # in the tables
         self.problems: list[Problem] = []  # in what brings them together
         self.removed: list[str] = []
-        self.where: dict[Path, Where] = {}  # of what other files brought
-        self.rows: dict[Path, tuple[str, list[int]]] = {}  # of segments out of spreadsheets
-        self.shifted: list[tuple[Path, int]] = []  # segments that variants removed, for the lines of those behind
 
     def load(self) -> None:
         """Read the file and everything it stands on."""
         chain = self._chain()
-        self.base = chain[-1]
-        self.tables = dict(self.base.tables)
-        self._take_files(self.base)
+        base = chain[-1]
+        self.origins = Origins(base)
+        self.tables = dict(base.tables)
+        self._take_files(base)
         if self.problems:  # without its segments nothing on a shaft has a place
             raise ModelError([*self.problems, *map(self._problem, self.faults)])
-        self._include(self.base, self.tables.pop("include", None))
+        self._include(base, self.tables.pop("include", None))
         for key in ("change", "add", "remove"):
             if key in self.tables:
                 del self.tables[key]
@@ -68,7 +65,7 @@ class Loader:
         problems = [*self.problems, *map(self._problem, [*self.faults, *faults])]
         if problems:
             raise ModelError(dict.fromkeys(problems))
-        return model.told_by(_Lines(self))
+        return model.told_by(SourceLines(self.origins, self.tables))
 
     # ---- other files
 
@@ -120,7 +117,7 @@ class Loader:
         found = self._beside(source, file, (*path, "segments_file"))
         if found is not None:
             shaft["segments"], lines = segments(found)
-            self.rows[*path, "segments"] = (found.shown, lines)
+            self.origins.remember_rows((*path, "segments"), found.shown, lines)
 
     def _include(self, source: Source, names: object) -> None:
         """Take materials and limits out of other files."""
@@ -150,7 +147,7 @@ class Loader:
             )
         elif key in INCLUDED and not isinstance(content, dict):
             self._tell(source, (key,), f"{key} is {thing(content)}, not a group of tables. Write [{key}.NAME].")
-        elif isinstance(content, dict):
+        elif key in INCLUDED and isinstance(content, dict):
             own = self.tables.setdefault(key, {})
             for name, table in content.items():
                 if not isinstance(own, dict) or name in own:
@@ -158,7 +155,7 @@ class Loader:
                     self._tell(source, (key, name), f"{quote(name)} {already}")
                 else:
                     own[name] = table
-                    self._remember(source, (key, name), (key, name))
+                    self.origins.remember(source, (key, name), (key, name))
 
     # ---- variants
 
@@ -181,7 +178,7 @@ class Loader:
         for key in ("title", "question", "source", "format"):
             if key in tables:
                 self.tables[key] = tables[key]
-                self._remember(source, (key,), (key,))
+                self.origins.remember(source, (key,), (key,))
 
     def _remove(self, source: Source, work: Changing, names: object) -> None:
         if not isinstance(names, list):
@@ -190,7 +187,7 @@ class Loader:
         for index, name in enumerate(names):
             gone = work.remove(name, ("remove", index))
             if gone is not None and isinstance(gone[-1], int):
-                self.shifted.append((gone[:-1], gone[-1]))
+                self.origins.removed.append((gone[:-1], gone[-1]))
 
     def _change(self, source: Source, work: Changing, changes: object) -> None:
         if not isinstance(changes, Mapping):
@@ -200,7 +197,7 @@ class Loader:
         for steps, value in leaves(changes, whole):
             path = work.change(".".join(steps), value, ("change", *steps))
             if path is not None:
-                self._remember(source, ("change", *steps), path)
+                self.origins.remember(source, ("change", *steps), path)
 
     def _add(self, source: Source, work: Changing, groups: object) -> None:
         if not isinstance(groups, Mapping) or not all(isinstance(each, Mapping) for each in groups.values()):
@@ -209,7 +206,7 @@ class Loader:
         for group, tables in groups.items():
             for name, table in tables.items():
                 work.add(group, name, table, ("add", group, name))
-                self._remember(source, ("add", group, name), (group, name))
+                self.origins.remember(source, ("add", group, name), (group, name))
 
     def set(self, changes: Mapping[str, Any]) -> None:
         """Apply changes from outside the files."""
@@ -217,19 +214,11 @@ class Loader:
         for place, value in changes.items():
             path = work.change(place, value, (SET, place))
             if path is not None:
-                self.where[path] = (SET, None)
+                self.origins.where[path] = (SET, None)
         self.problems += [problem(str(fault.path[1]), fault.sentence, SET) for fault in work.faults]
         self.tables = work.tables
 
-    # ---- lines
-
-    def _remember(self, source: Source, there: Path, here: Path) -> None:
-        """The lines of what a file brought, under the path where it now stands."""
-        for old in [path for path in self.where if path[: len(here)] == here]:
-            del self.where[old]
-        for path, line in source.toml.lines.items():
-            if path[: len(there)] == there:
-                self.where[here + path[len(there) :]] = (source.shown, line)
+    # ---- telling
 
     def _tell(self, source: Source, path: Path, sentence: str) -> None:
         """A mistake in how a file is brought in, with its line there."""
@@ -240,62 +229,7 @@ class Loader:
 
     def _problem(self, fault: Fault) -> Problem:
         """A mistake in the tables, with file and line."""
-        return problem(address(fault.path, self.tables), fault.sentence, *self.find(fault.path))
-
-    def find(self, path: Path) -> Where:
-        """File and line of a path in the tables, or of the nearest table around it."""
-        for length in range(len(path), 0, -1):
-            part = path[:length]
-            where = self.where.get(part) or self._row(part)
-            if where is not None:
-                return where
-            line = self.base.toml.lines.get(self._before_removals(part))
-            if line is not None:
-                return self.base.shown, line
-        return self.base.shown, None
-
-    def _row(self, path: Path) -> Where | None:
-        """File and line of a segment out of a spreadsheet."""
-        if path[:-1] not in self.rows:
-            return None
-        file, lines = self.rows[path[:-1]]
-        index = int(path[-1])
-        return (file, lines[index]) if index < len(lines) else None
-
-    def _before_removals(self, path: Path) -> Path:
-        """The path that a segment had before others were removed."""
-        for prefix, removed in reversed(self.shifted):
-            depth = len(prefix)
-            if path[:depth] == prefix and len(path) > depth and int(path[depth]) >= removed:
-                path = (*prefix, int(path[depth]) + 1, *path[depth + 1 :])
-        return path
-
-
-class _Lines(Mapping[str, tuple[str, int]]):
-    """File and line of every address, found when first asked for."""
-
-    def __init__(self, loader: Loader) -> None:
-        self._loader = loader
-        self._found: dict[str, tuple[str, int]] | None = None
-
-    @property
-    def _all(self) -> dict[str, tuple[str, int]]:
-        if self._found is None:
-            loader = self._loader
-            paths = [*loader.base.toml.lines, *loader.where]
-            paths += [(*prefix, index) for prefix, (_, lines) in loader.rows.items() for index in range(len(lines))]
-            found = {address(path, loader.tables): loader.find(path) for path in paths}
-            self._found = {place: (file, line) for place, (file, line) in found.items() if line is not None}
-        return self._found
-
-    def __getitem__(self, place: str) -> tuple[str, int]:
-        return self._all[place]
-
-    def __iter__(self) -> Iterator[str]:
-        return iter(self._all)
-
-    def __len__(self) -> int:
-        return len(self._all)
+        return problem(address(fault.path, self.tables), fault.sentence, *self.origins.find(fault.path))
 
 
 def _variant_remedy(key: str) -> str:

@@ -7,7 +7,9 @@ import re
 from fe_shaft.errors import quote
 
 _AT = re.compile(r" \(at (?:line (\d+), column \d+|end of document)\)$")
-_UNQUOTED_NUMBER = re.compile(r"""([\w.-]+)[ \t]*=[ \t]*(~?[ \t]*[+-]?[\d.,]+[ \t]*[^\s\d.,"'\]}#][^,"\]}#]*)""")
+_UNQUOTED_NUMBER = re.compile(
+    r"""([\w.-]+)[ \t]*=[ \t]*(~?[ \t]*[+-]?[\d.,]+[ \t]*[^\s\d.,"'\]}#=][^,"\]}#=]*)(?![^,]*=)"""
+)
 _UNQUOTED_TILDE = re.compile(r"""([\w.-]+)[ \t]*=[ \t]*(~[^,"\]}#]*)""")
 _UNQUOTED_WORD = re.compile(r"""([\w.-]+)[ \t]*=[ \t]*([A-Za-z_][^,"'\]}#]*)""")
 _NO_VALUE = re.compile(r"""([\w.-]+)[ \t]*=[ \t]*(?:#.*)?$""")
@@ -36,6 +38,7 @@ _SENTENCES = {
     "Expected ']' at the end of a table": "a heading is not closed. Write [group.name].",
     "Expected ']]' at the end of an array": "a heading is not closed. Write [group.name].",
     "Invalid initial character for a key part": "no key begins like this. Write key = value or [group.name].",
+    "Invalid statement": "this line is no key and no heading. Write key = value or [group.name].",
     "Invalid hex value": "a wrong \\u code in a text. Leave it out.",
     "Escaped character is not a Unicode": "a wrong \\u code in a text. Leave it out.",
     "Invalid date or datetime": "a date that does not exist. Put it in quotes.",

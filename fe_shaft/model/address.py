@@ -6,8 +6,9 @@ from collections.abc import Iterable, Mapping
 from typing import Any
 
 from fe_shaft.model.groups import GROUPS
+from fe_shaft.model.plain import joined
 from fe_shaft.model.shaft import inside_shaft
-from fe_shaft.model.words import Named, joined
+from fe_shaft.model.words import Named
 
 
 def address(path: tuple[str | int, ...], source: Iterable[Named] | Mapping[str, Any] = ()) -> str:

@@ -7,7 +7,8 @@ from pydantic import Field
 from typing_extensions import override
 
 from fe_shaft.model.clock import TURNS, Turns
-from fe_shaft.model.kinds import Factor, Flag, Name, Reference, Shares, Text
+from fe_shaft.model.kinds import Factor, Flag, Name, Reference, Text
+from fe_shaft.model.lists import Shares
 from fe_shaft.model.quantity import Power, Speed, Torque
 from fe_shaft.model.words import Fault, Named
 

@@ -68,9 +68,9 @@ class HelixKind(Kind):
     @staticmethod
     def _angle(raw: Any) -> Value:
         try:
-            return parse(raw, "angle", example="deg left")
+            return parse(raw, "angle", example="deg")
         except UnitError as error:
-            raise refuse(str(error)) from None
+            raise refuse(f'{error} With the hand: "15 deg left".') from None
 
     @override
     def json(self) -> dict[str, Any]:

@@ -7,7 +7,8 @@ from pydantic import Field, ValidationInfo
 from typing_extensions import override
 
 from fe_shaft.errors import nearest, quote
-from fe_shaft.model.kinds import Choice, Kind, Listed, Name, Reference, shown, thing
+from fe_shaft.model.kinds import Choice, Kind, Name, Reference, shown, thing
+from fe_shaft.model.lists import Listed
 from fe_shaft.model.quantity import Quantity
 from fe_shaft.model.refusal import refuse
 from fe_shaft.model.words import Fault, Named
@@ -95,10 +96,10 @@ class Limit(Named):
         description="What is limited.", examples=["deflection"]
     )
     max: Annotated[Value, Bound()] | None = Field(
-        default=None, description="Largest value allowed.", examples=["20 um"]
+        default=None, description="Largest value allowed; without `min`, of the size.", examples=["20 um"]
     )
     min: Annotated[Value, Bound()] | None = Field(
-        default=None, description="Smallest value allowed.", examples=["-5 um"]
+        default=None, description="Smallest value allowed; without `max`, of the size.", examples=["-5 um"]
     )
     counting: Annotated[
         str,
@@ -114,3 +115,7 @@ class Limit(Named):
             yield Fault(("max",), 'max is not written. Write max = "20 um", or min.')
         if self.max and self.min and self.min.si >= self.max.si:
             yield Fault(("min",), f"{self.min.text} is not below max = {self.max.text}. Exchange them.")
+        for key, bound, other in (("max", self.max, "min"), ("min", self.min, "max")):
+            if bound and other not in self.given and bound.si <= 0:
+                says = f"{bound.text}: without {other} it limits the size, which is never negative"
+                yield Fault((key,), f"{says}. Write a value above 0, or {other} as well for a range.")

@@ -146,8 +146,8 @@ def _belts(model: Model, case: Case) -> Iterator[Note]:
         own = (pulley.belt_pull.tight.si - pulley.belt_pull.slack.si) * pulley.reference_diameter / 2
         torque = passing[pulley.name] * case.torque_si
         if abs(own - torque) > BELT_MISMATCH * max(own, torque):
-            what = f"belt_pull of {pulley.name} goes with {show(own, 'N m')}, but {show(torque, 'N m')} pass it: {case.name}"
-            yield Note(f"{pulley.name}.belt_pull", what)
+            both = f"goes with {show(own, 'N m')}, but {show(torque, 'N m')} pass it"
+            yield Note(f"{pulley.name}.belt_pull", f"belt_pull of {pulley.name} {both}: {case.name}")
 
 
 def _faces(model: Model) -> Iterator[Note]:

@@ -10,7 +10,7 @@ from typing_extensions import override
 from fe_shaft.errors import quote
 from fe_shaft.model.kinds import Kind
 from fe_shaft.model.refusal import refuse
-from fe_shaft.units import FACTORS, TRADE_UNITS, UnitError, Value, convert, parse, slip
+from fe_shaft.units import FACTORS, TRADE_UNITS, UnitError, Value, convert, parse
 
 Sign = Literal["positive", "not negative", "any"]
 MOST_REMEMBERED = 20_000  # texts whose value a kind keeps; long shafts repeat few texts
@@ -58,8 +58,6 @@ class Quantity(Kind):
             value = parse(raw, self.dimension, usual=None if loose else self.usual, example=self.unit)
         except UnitError as error:
             raise refuse(str(error)) from None
-        except RecursionError:
-            raise refuse("tables stand too deep in each other. Write a number with its unit.") from None
         self._check_sign(value)
         if text:
             if len(self._known) >= MOST_REMEMBERED:
@@ -81,10 +79,6 @@ class Quantity(Kind):
         low, high = (f"{convert(end, self.unit):.4g}" for end in self.usual)
         return f"{quote(value.text)} is unusual; usual: {low} to {high} {self.unit}".rstrip()
 
-    def slip_of(self, value: Value) -> str | None:
-        """The sentence about a value that looks like a slip of units, or None."""
-        return None if self.usual is None else slip(value, self.usual, self.unit)
-
     @override
     def json(self) -> dict[str, Any]:
         units = ", ".join(unit or "bare number" for unit in FACTORS[self.dimension])
@@ -100,16 +94,16 @@ class Quantity(Kind):
 Length = Annotated[Value, Quantity("length", ("0.1 mm", "20 m"))]
 Diameter = Annotated[Value, Quantity("length", ("1 mm", "3 m"))]
 Bore = Annotated[Value, Quantity("length", ("0.5 mm", "3 m"), sign="not negative")]
-Width = Annotated[Value, Quantity("length", ("0.1 mm", "20 m"))]
-Fillet = Annotated[Value, Quantity("length", ("0.05 mm", "300 mm"), sign="not negative")]
+Width = Annotated[Value, Quantity("length", ("0.5 mm", "1.5 m"))]
+Fillet = Annotated[Value, Quantity("length", ("0.05 mm", "100 mm"), sign="not negative")]
 Radius = Annotated[Value, Quantity("length", ("0.1 mm", "20 m"), sign="not negative")]
 Shift = Annotated[Value, Quantity("length", ("0.001 mm", "20 m"), sign="any")]
-Offset = Annotated[Value, Quantity("length", ("0.1 um", "5 mm"), sign="not negative", unit="um")]
-BoreTilt = Annotated[Value, Quantity("angle", ("0.001 mrad", "50 mrad"), sign="not negative", unit="mrad")]
+Offset = Annotated[Value, Quantity("length", ("0.1 um", "1 mm"), sign="not negative", unit="um")]
+BoreTilt = Annotated[Value, Quantity("angle", ("0.001 mrad", "20 mrad"), sign="not negative", unit="mrad")]
 Coordinate = Quantity("length", ("0.01 mm", "100 m"), sign="any")
 Module = Annotated[Value, Quantity("length", ("0.1 mm", "60 mm"))]
 RadialStiffness = Annotated[Value, Quantity("stiffness", ("0.5 N/um", "20000 N/um"))]
-TiltStiffness = Annotated[Value, Quantity("tilt_stiffness", ("0.0001 N m/mrad", "100000 N m/mrad"))]
+TiltStiffness = Annotated[Value, Quantity("tilt_stiffness", ("0.001 N m/mrad", "20000 N m/mrad"))]
 PressureAngle = Annotated[Value, Quantity("angle", ("10 deg", "35 deg"))]
 ConeAngle = Annotated[Value, Quantity("angle", ("1 deg", "90 deg"))]
 Wrap = Annotated[Value, Quantity("angle", ("30 deg", "360 deg"))]
@@ -119,8 +113,8 @@ Moment = Annotated[Value, Quantity("moment", ("0.0001 N m", "20000 kN m"), sign=
 Torque = Annotated[Value, Quantity("moment", ("0.0001 N m", "20000 kN m"), sign="not negative")]
 Power = Annotated[Value, Quantity("power", ("0.01 W", "500000 kW"), sign="not negative")]
 Speed = Annotated[Value, Quantity("speed", ("0.001 rpm", "500000 rpm"), sign="not negative")]
-Weight = Annotated[Value, Quantity("mass", ("0.1 g", "500 t"), sign="not negative")]
-Modulus = Annotated[Value, Quantity("pressure", ("1 GPa", "1200 GPa"), unit="GPa")]
-Density = Annotated[Value, Quantity("density", ("50 kg/m^3", "25000 kg/m^3"))]
+Weight = Annotated[Value, Quantity("mass", ("0.1 g", "50 t"), sign="not negative")]
+Modulus = Annotated[Value, Quantity("pressure", ("3 GPa", "1200 GPa"), unit="GPa")]
+Density = Annotated[Value, Quantity("density", ("100 kg/m^3", "25000 kg/m^3"))]
 Expansion = Annotated[Value, Quantity("expansion", ("1e-8 1/K", "5e-4 1/K"), sign="any")]
 Acceleration = Quantity("acceleration", ("0.01 m/s^2", "10000 m/s^2"), sign="any")

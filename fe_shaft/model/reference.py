@@ -9,13 +9,15 @@ from functools import cache
 from fe_shaft.model.draft import FILE_KEYS
 from fe_shaft.model.groups import GROUPS
 from fe_shaft.model.heading import Heading
-from fe_shaft.model.kinds import Kind, Listed
+from fe_shaft.model.kinds import Kind
 from fe_shaft.model.limit import QUANTITIES
+from fe_shaft.model.lists import Listed
 from fe_shaft.model.material import BUILT_IN_NAMES
 from fe_shaft.model.notes import kind_of
+from fe_shaft.model.plain import as_toml
 from fe_shaft.model.quantity import Quantity
 from fe_shaft.model.shaft import Vector
-from fe_shaft.model.words import Words, as_toml, holds_list, inner_noun, written
+from fe_shaft.model.words import Words, holds_list, inner_noun, written
 from fe_shaft.units import FACTORS
 
 _FILE_KINDS = {

@@ -13,10 +13,11 @@ from typing_extensions import override
 from fe_shaft.errors import quote
 from fe_shaft.model.kinds import Choice, Kind, Name, Reference, Text, shown, thing
 from fe_shaft.model.material import Material
+from fe_shaft.model.plain import joined
 from fe_shaft.model.quantity import Coordinate, Quantity
 from fe_shaft.model.refusal import refuse
 from fe_shaft.model.segment import Segment, Shear
-from fe_shaft.model.words import Fault, Named, joined
+from fe_shaft.model.words import Fault, Named
 from fe_shaft.units import Value
 
 if TYPE_CHECKING:

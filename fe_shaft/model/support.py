@@ -10,7 +10,8 @@ from pydantic import Field
 from typing_extensions import override
 
 from fe_shaft.model.clock import Direction
-from fe_shaft.model.kinds import Choice, Listed
+from fe_shaft.model.kinds import Choice
+from fe_shaft.model.lists import Listed
 from fe_shaft.model.part import Part
 from fe_shaft.model.quantity import BoreTilt, Offset, Shift, Width
 from fe_shaft.model.stiffness import Matrix, Seat, Stiffness

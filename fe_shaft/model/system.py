@@ -232,7 +232,8 @@ class Model(Lookup):
         groups: dict[str, dict[str, Any]] = {group: {} for group in GROUPS}
         for noun in (*self.parts, *self.written_cases, *self.written_limits, *self.own_materials):
             groups[group_of(noun)][noun.name] = noun
-        return self.heading.to_table() | {group: nouns for group, nouns in groups.items() if nouns}
+        top = {key: value for key, value in self.heading.to_table().items() if key != "format"}
+        return top | {group: nouns for group, nouns in groups.items() if nouns}
 
     def to_table(self) -> dict[str, Any]:
         """The model as nested tables, as a model file states it; values as the user wrote them."""

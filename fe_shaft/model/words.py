@@ -6,15 +6,16 @@ A noun in which something is wrong can still be salvaged: what is readable serve
 that a file tells all its mistakes at once.
 """
 
-from collections.abc import Iterable, Iterator, Mapping
+from collections.abc import Iterator, Mapping
 from inspect import Parameter, Signature
 from typing import TYPE_CHECKING, Annotated, Any, ClassVar, NamedTuple, Self, get_origin
 
 from pydantic import ConfigDict, Field, TypeAdapter, ValidationError, ValidationInfo, model_validator
 from pydantic_core import InitErrorDetails
 
-from fe_shaft.errors import ModelError, quote
+from fe_shaft.errors import ModelError
 from fe_shaft.model.kinds import Choice, Text, shown, thing
+from fe_shaft.model.plain import as_toml, joined
 from fe_shaft.model.refusal import problem, refuse, sentence_of
 from fe_shaft.model.symbols import meant_key, unknown_key
 from fe_shaft.units import Value
@@ -99,12 +100,8 @@ class Words(BaseModel):
         cls.__pydantic_init_subclass__()
 
     def __setattr__(self, key: str, value: object) -> None:
-        if key.startswith("_"):
-            super().__setattr__(key, value)
-            return
-        raise ModelError(
-            problem(self.place_of(self.__dict__, (key,)), "a part of a model does not change. Make a new one.")
-        )
+        place = self.place_of(self.__dict__, (key,))
+        raise ModelError(problem(place, "a part of a model does not change. Make a new one."))
 
     @model_validator(mode="wrap")
     @classmethod
@@ -244,12 +241,6 @@ class Named(Words):
         name: Any  # text; a segment's may be None
 
 
-def joined(steps: Iterable[str | int]) -> str:
-    """Steps of an address, fit to be printed."""
-    texts = map(str, steps)
-    return ".".join(text if text.isprintable() and len(text) <= 60 else quote(text) for text in texts)
-
-
 def written(value: Any) -> Any:
     """A validated value as a model file states it."""
     if isinstance(value, Words):
@@ -268,19 +259,6 @@ def example_of(cls: type[Words], key: str) -> str:
     field = cls.model_fields.get(key)
     example = field.examples[0] if field is not None and field.examples else ...
     return f"{key} = {as_toml(example)}"
-
-
-def as_toml(value: object) -> str:
-    """A short value as TOML writes it."""
-    if isinstance(value, bool):
-        return str(value).lower()
-    if isinstance(value, str):
-        return f'"{value}"'
-    if isinstance(value, list | tuple):
-        return f"[{', '.join(as_toml(each) for each in value)}]"
-    if isinstance(value, Mapping):
-        return f"{{ {', '.join(f'{key} = {as_toml(each)}' for key, each in value.items())} }}"
-    return "..." if value is ... else str(value)
 
 
 def faults_of(error: ValidationError) -> list[Fault]:

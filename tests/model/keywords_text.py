@@ -10,8 +10,9 @@ from fe_shaft.model.groups import GROUPS
 from fe_shaft.model.heading import Heading
 from fe_shaft.model.helix import HelixKind
 from fe_shaft.model.housing import Estimates, Housing, OutputUnits
-from fe_shaft.model.kinds import Choice, Count, Factor, Flag, Kind, Listed, Name, Reference, Shares, Text
+from fe_shaft.model.kinds import Choice, Count, Factor, Flag, Kind, Name, Reference, Text
 from fe_shaft.model.limit import Bound, Of
+from fe_shaft.model.lists import Listed, Shares
 from fe_shaft.model.loads import BeltPull, Couple
 from fe_shaft.model.notes import kind_of
 from fe_shaft.model.part import SpreadKind

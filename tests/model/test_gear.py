@@ -83,7 +83,8 @@ def test_pressure_angle_is_that_of_iso_53_unless_written() -> None:
         (
             {"hub": "one piece"},
             "g.hub",
-            "hub is not known yet in this version. Leave it out: tooth forces act on the reference cylinder, gear bodies are rigid.",
+            "hub is not known yet in this version. "
+            "Leave it out: tooth forces act on the reference cylinder, gear bodies are rigid.",
         ),
         ({"internal": True}, "g.internal", "internal is not known yet in this version. Only external gears are known."),
         ({"cg_at": "3 mm"}, "g.mass", 'mass is not written, but cg_at is. Write mass = "4.1 kg".'),

@@ -14,16 +14,17 @@ from fe_shaft.model.kinds import (
     Flag,
     FreeName,
     Kind,
-    Listed,
     Name,
     Reference,
-    Shares,
     Text,
     name_fault,
     shown,
     thing,
 )
+from fe_shaft.model.lists import Listed, Shares
 from fe_shaft.model.part import SpreadKind
+from fe_shaft.model.position import PositionKind
+from fe_shaft.model.quantity import Quantity
 from fe_shaft.model.segment import ShearKind
 
 SHARES = Shares(Factor(0.0, 1.0, open_at_least=True), total=1.0, word=True)
@@ -162,12 +163,12 @@ def test_accepted(kind: Kind, raw: Any, value: Any) -> None:
             "0 deg left",
             '"0 deg left": a helix angle lies above 0 and up to 60 deg; its hand says the side. Spur: leave helix out.',
         ),
-        (HelixKind(), "15 left", '"15" has no unit. Write "15 deg left".'),
-        (HelixKind(), 15, '15 has no unit. Write "15 deg left".'),
+        (HelixKind(), "15 left", '"15" has no unit. Write "15 deg". With the hand: "15 deg left".'),
+        (HelixKind(), 15, '15 has no unit. Write "15 deg". With the hand: "15 deg left".'),
     ],
 )
 def test_refused(kind: Kind, raw: Any, sentence: str) -> None:
-    with pytest.raises(ValueError) as caught:  # noqa: PT011 - the sentence is compared whole
+    with pytest.raises(ValueError) as caught:
         kind.check(raw)
     assert str(caught.value) == sentence
 
@@ -199,3 +200,33 @@ def test_raw_values_in_sentences() -> None:
     assert thing(object()) == "something else"
     assert shown({"a": 1}) == "this"
     assert thing({"a": 1}) == "a table"
+
+
+def test_values_that_were_read_before_are_read_again() -> None:
+    stiffness = Quantity("stiffness", ("0.5 N/um", "20000 N/um"))
+    value = stiffness.check("~93 N/um")
+    assert stiffness.check(value) == value
+    with pytest.raises(ValueError, match="is a stiffness, not a length"):
+        Quantity("length").check(value)
+
+
+def test_few_texts_are_remembered(monkeypatch: pytest.MonkeyPatch) -> None:
+    monkeypatch.setattr("fe_shaft.model.quantity.MOST_REMEMBERED", 2)
+    length = Quantity("length")
+    assert [length.check(f"{index} m").si for index in (1, 2, 3, 2, 1)] == [1.0, 2.0, 3.0, 2.0, 1.0]
+    assert len(length._known) <= 2
+
+
+def test_an_estimate_is_no_position() -> None:
+    rough = Quantity("length").check({"value": "3 mm", "low": "2 mm", "high": "4 mm"})
+    with pytest.raises(ValueError, match="is an estimate; a position is one length"):
+        PositionKind().check(rough)
+
+
+def test_a_helix_that_is_a_quantity_lacks_its_hand() -> None:
+    import pint
+
+    with pytest.raises(
+        ValueError, match=r'^"15 deg": left-hand or right-hand\? Write "15 deg left" or "15 deg right"\.$'
+    ):
+        HelixKind().check(pint.UnitRegistry().Quantity(15, "degree"))

@@ -90,7 +90,7 @@ def test_what_a_limit_holds_for() -> None:
     limits = [
         fs.Limit("a", of="every bearing", quantity="tilt", max="1 mrad"),
         fs.Limit("b", of=["wheel", "disc"], quantity="slope", max="1 mrad", cases=["running"]),
-        fs.Limit("c", of="every gear", quantity="separation", min="-5 um"),
+        fs.Limit("c", of="every gear", quantity="separation", min="-5 um", max="20 um"),
     ]
     made = model(limits=limits)
     assert made.targets("a") == ("lay_left", "lay_right")

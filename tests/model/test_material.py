@@ -50,7 +50,7 @@ def test_poisson_ratio_is_bounded(ratio: object) -> None:
 def test_a_modulus_in_the_wrong_unit_is_a_slip() -> None:
     assert only(fs.Material, "m", youngs_modulus="210 kPa", poisson_ratio=0.3) == (
         "m.youngs_modulus",
-        '"210 kPa" is 0.00021 GPa; usual: 1 to 1200. Meant: GPa? (to keep it: range_check = "off" in this table)',
+        '"210 kPa" is 0.00021 GPa; usual: 3 to 1200. Meant: GPa? (to keep it: range_check = "off" in this table)',
     )
 
 

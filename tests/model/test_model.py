@@ -259,3 +259,65 @@ def test_pint_quantities_are_accepted() -> None:
     assert segment.diameter.text == "1.5 in"
     assert model([fs.Pin("p", at=62 * unit.mm, holds=["tilt"])]).places["p"].x == pytest.approx(0.062)
     assert only(fs.Segment, "s", length=38 * unit.kg, diameter="1 mm")[0] == "s.length"
+
+
+# ---- several shafts
+
+
+def two_shafts(*extra: Any, **words: Any) -> fs.Model:
+    second = shaft("output", left_end=["0 mm", "0 mm", "112 mm"])
+    gears = [
+        fs.Gear(name, on=on, at="seat", teeth=20, normal_module="2 mm", facewidth="20 mm", mate="3 o'clock")
+        for name, on in (("a", "layshaft"), ("b", "output"))
+    ]
+    hub = fs.Coupling("c", on="layshaft", at="stub")
+    return fs.Model("x", [shaft(), second, *gears, hub, *extra], **words)
+
+
+def flow(**words: Any) -> fs.Case:
+    return fs.Case("running", **({"torque": "3 N m", "turns": "clockwise from left"} | words))
+
+
+def test_power_stays_on_one_shaft() -> None:
+    assert two_shafts(cases=[flow(enters="a", leaves="c", of_shaft="layshaft")]).case("running").torque_si == 3.0
+    assert only(lambda: two_shafts(cases=[flow(enters="a", leaves="b")])) == (
+        "running.leaves",
+        "power passes a on layshaft and b on output, but nothing joins these shafts: gear pairs are not known yet in "
+        "this version. Write one case for each shaft.",
+    )
+    assert only(lambda: two_shafts(cases=[flow(enters="a", leaves="c", of_shaft="output")])) == (
+        "running.of_shaft",
+        "the power passes on layshaft, not on output. Leave of_shaft out.",
+    )
+
+
+def test_which_shaft_a_position_is_asked_of() -> None:
+    made = two_shafts()
+    assert made.position("seat", "output") == made.position("seat", "layshaft")
+    assert only(lambda: made.position("seat")) == ("position", "which shaft? Known: layshaft, output.")
+
+
+# ---- bounds
+
+
+def test_counts_are_bounded(monkeypatch: pytest.MonkeyPatch) -> None:
+    pins = [fs.Pin("p", at="1 mm", holds=["radial"])] * 10_001
+    assert only(fs.Model, "x", [*pins]) == ("parts", "there are 10001 parts; 10000 at most are computed.")
+    tables = {"pins": {f"p{index}": {} for index in range(10_001)}}
+    assert fs.Model.from_tables(tables)[1][0].sentence == "there are 10001 pins; 10000 at most are computed."
+    monkeypatch.setattr("fe_shaft.model.shaft.MOST_SEGMENTS", 4)
+    assert only(shaft) == ("layshaft.segments", "5 segments; 4 at most are computed.")
+
+
+def test_faults_are_bounded() -> None:
+    tables = {f"k{index}": 1 for index in range(2000)}
+    assert len(fs.Model.from_tables(tables)[1]) == 500
+
+
+def test_words_of_the_heading() -> None:
+    made = model(question="Why?", units={"force": "lbf"}, estimates={"together": True})
+    assert made.question == "Why?"
+    assert made.units is not None
+    assert made.units.force == "lbf"
+    assert made.estimates.together
+    assert not model().estimates.together

@@ -86,13 +86,14 @@ def test_a_part_follows_when_a_shoulder_moves() -> None:
         ("wheel + seat", '"seat" is not a number with a unit. Write a number and a unit, as in "12 mm".'),
         (
             "~62 mm",
-            '"~62 mm": only a stiffness has a usual band (half to twice). Write { value = "62 mm", low = "...", high = "...", source = "..." }.',
+            '"~62 mm": only a stiffness has a usual band (half to twice). '
+            'Write { value = "62 mm", low = "...", high = "...", source = "..." }.',
         ),
         ("left", '"left" is not a position. Write "62 mm", "wheel_seat" or "wheel + 12 mm".'),
     ],
 )
 def test_positions_that_cannot_be_read(raw: object, sentence: str) -> None:
-    with pytest.raises(ValueError) as caught:  # noqa: PT011 - the sentence is compared whole
+    with pytest.raises(ValueError) as caught:
         PositionKind().check(raw)
     assert str(caught.value) == sentence
 
@@ -121,7 +122,8 @@ def test_positions_that_cannot_be_read(raw: object, sentence: str) -> None:
         (
             {"at": "output.seat"},
             "p.at",
-            '"output.seat": no shaft is called "output". Known: layshaft. Anchors are segments and parts of layshaft itself.',
+            '"output.seat": no shaft is called "output". Known: layshaft. '
+            "Anchors are segments and parts of layshaft itself.",
         ),
         ({"at": "p + 1 mm"}, "p.at", "positions go round in a circle: p -> p. Give one of them a length."),
         ({"at": "1 mm", "on": "layshat"}, "p.on", 'no shaft is called "layshat". Nearest: layshaft.'),

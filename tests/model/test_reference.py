@@ -41,7 +41,7 @@ def test_an_entry_tells_kind_unit_range_and_default() -> None:
         "gears",
         "length",
         "mm",
-        "0.1 mm to 20 m",
+        "0.5 mm to 1.5 m",
     )
     assert facewidth.example == 'facewidth = "32 mm"'
     (angle,) = explain("gears.pressure_angle")
