@@ -123,16 +123,19 @@ def _off_bounds(bounds: Array, cuts: Array, same: float) -> Array:
 
 
 def _cone_cuts(arrays: SegmentArrays, bounds: Array) -> Array:
-    """Cut cones in geometric steps so that Gauss points are exact inside each piece."""
+    """Cut cones so that in each piece neither diameter nor wall grows by more than `CONE_RATIO`.
+
+    Both are cut in geometric steps of their own: a bore may open the other way than the outside.
+    """
     outer = np.array([arrays.diameter_left, arrays.diameter_right])
     wall = outer - np.array([arrays.bore_left, arrays.bore_right])
-    ratio = np.maximum(outer.max(axis=0) / outer.min(axis=0), wall.max(axis=0) / wall.min(axis=0))
     cuts = [np.empty(0)]
-    for k in np.flatnonzero(ratio > CONE_RATIO):
-        n = int(np.ceil(np.log(ratio[k]) / np.log(CONE_RATIO)))
-        by = outer[:, k] if outer[:, k].max() / outer[:, k].min() > CONE_RATIO else wall[:, k]
-        growth = by[1] / by[0]
-        cuts.append(bounds[k] + arrays.length[k] * (growth ** (np.arange(1, n) / n) - 1) / (growth - 1))
+    for left, right in (outer, wall):
+        growth = right / left
+        steps = np.ceil(np.abs(np.log(growth)) / np.log(CONE_RATIO))
+        for k in np.flatnonzero(steps > 1):
+            share = (growth[k] ** (np.arange(1, steps[k]) / steps[k]) - 1) / (growth[k] - 1)
+            cuts.append(bounds[k] + arrays.length[k] * share)
     return np.concatenate(cuts)
 
 
@@ -194,10 +197,6 @@ def _pieces(arrays: list[SegmentArrays], laid: list[_Laid], span_left: Array, n_
         share_right=shares[1],
         chains=tuple(accumulate(len(part.segment) for part in laid[:-1])),
     )
-
-
-def _share(part: _Laid, k: int) -> Array:
-    return part.shares[k] if part.shares else np.full(len(part.segment), float(k))
 
 
 def _shifted(numbers: Ints, shift: int) -> Ints:

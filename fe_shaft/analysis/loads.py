@@ -135,18 +135,13 @@ def balance_torque(model: Model, spinning: set[str]) -> list[Balance]:
 
 
 def _taker(model: Model, shaft: str, k: int) -> str | None:
-    """The part of a shaft at which torque leaves in case k; the tool balances there."""
-    if not model.cases:
-        return None
+    """The part of a shaft at which torque leaves in case k: the tool balances there and counts twist from there."""
     names = [name for name in model.cases[k].leaves_shares if model.places[name].shaft == shaft]
     return names[0] if names else None
 
 
 def twist_reference(model: Model, grid: Grid, shaft: str) -> tuple[int, list[str | None]]:
     """Node at which the spin of a free shaft is held, and the part from which twist is counted in each case."""
-    names: list[str | None] = []
-    for case in model.cases or (None,):
-        here = [n for n in case.leaves_shares if model.places[n].shaft == shaft] if case is not None else []
-        names.append(here[0] if here else None)
+    names = [_taker(model, shaft, k) for k in range(len(model.cases))]
     held = next((n for n in names if n is not None), None)
     return (grid.shafts[shaft].nodes.start if held is None else grid.node_of[held]), names

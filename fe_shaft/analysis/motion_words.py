@@ -340,7 +340,7 @@ def _take_out(model: Model, shaft: str, k: int) -> str:
     return f"Write in case {case.name}   leaves = {quote(free[0] if free else '...')}   or {hold}"
 
 
-# ---- stops that would have to pull
+# ---- stops that would have to pull, pins that do not fit
 
 
 def pulled_stop_sentence(model: Model, stop: Support, pull: float, k: int) -> str:
@@ -351,3 +351,9 @@ def pulled_stop_sentence(model: Model, stop: Support, pull: float, k: int) -> st
     return _told(
         f"{fact}, but {stop.name} only keeps it from moving {kept}.", f"{_hold(stop, 'axial')}, or take its stop out."
     )
+
+
+def misfit_sentence(shaft: str, pins: Sequence[str]) -> str:
+    """Pins in one place whose bores lie apart, and the remedy."""
+    fact = f"{shaft} does not fit {listed(pins)}: they hold it rigidly in one place, but their bores lie apart."
+    return _told(fact, "Give them the same offset and bore_tilt, or let one of them be a bearing that gives way.")

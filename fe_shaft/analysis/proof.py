@@ -34,7 +34,7 @@ def prove(solved: Solved, carried: Reactions) -> Proof:
     forces, moments = balance[0] if len(balance) == 1 else np.max(balance, axis=0)
     energies = _energies(solved)
     find = partial(_details, solved, energies.extra)
-    proof = Proof(forces, moments, solved.solution.residual, energies.imbalance(), find)
+    proof = Proof(forces, moments, solved.solution.residual, energies.imbalance(solved.solution.resistance[1]), find)
     if not proof.worst <= REFUSED_ABOVE:
         raise SolutionError(
             f"no trustworthy solution: {proof.sentence()}. Look for stiffnesses or diameters that differ by many "
@@ -56,7 +56,7 @@ def _equilibrium(solved: Solved, carried: Reactions, shaft: str) -> Array:
     for balance in solved.balances:
         if balance.shaft == shaft:
             total[3] += balance.torque
-    size = statics.size + np.abs(wrench[:, :3]).sum(axis=(0, 1)) + TINY
+    size = statics.size + np.abs(wrench[:, :3]).sum(axis=(0, 1)) + solved.solution.resistance[0] + TINY
     imbalance: Array = np.abs(total).reshape(2, 3, -1).max(axis=1) / size
     imbalance[1] /= statics.arm
     return imbalance
@@ -74,9 +74,10 @@ class _Energies(NamedTuple):
     work: Array
     extra: tuple[Array, Array] | None
 
-    def imbalance(self) -> Array:
+    def imbalance(self, least: float) -> Array:
+        """Energy against work, relative to them; both below `least` are measured by it."""
         stored = self.spans + self.springs
-        return np.asarray(np.abs(stored - self.work) / np.maximum(stored + np.abs(self.work), TINY))
+        return np.asarray(np.abs(stored - self.work) / np.maximum(stored + np.abs(self.work), least + TINY))
 
 
 def _energies(solved: Solved) -> _Energies:

@@ -9,12 +9,12 @@ from typing import TYPE_CHECKING
 import numpy as np
 from numpy.typing import NDArray
 
-from fe_shaft.analysis.motion_words import pulled_stop_sentence
+from fe_shaft.analysis.motion_words import misfit_sentence, pulled_stop_sentence
 from fe_shaft.analysis.proof import prove
 from fe_shaft.analysis.reactions import Reactions, reactions
 from fe_shaft.analysis.solution import Solved, counted_twist, solve_model
 from fe_shaft.errors import LoadError
-from fe_shaft.fem.dofs import UX
+from fe_shaft.fem.dofs import NDOF, RX, UX
 from fe_shaft.fem.span import Recovery
 from fe_shaft.model.actions import X_AXIS, case_names, clock, gravity_in_shaft
 from fe_shaft.model.gear import Gear
@@ -32,6 +32,8 @@ Array = NDArray[np.float64]
 
 #: A pull below this share of a stop's own forces is rounding.
 PULLED = 1e-9
+#: A pin that misses its bore by more than this share of the largest offset does not hold: rounding is 1e-12.
+MISFIT = 1e-6
 
 
 def solve_once(model: Model) -> Results:
@@ -41,6 +43,8 @@ def solve_once(model: Model) -> Results:
     proof = prove(solved, carried)
     if solved.table.stops:
         _refuse_pulled_stops(solved, carried)
+    if solved.table.gaps and solved.table.pins:
+        _refuse_misfits(solved, carried)
     u = counted_twist(solved)
     return Results(
         model=model,
@@ -67,7 +71,7 @@ def _part(solved: Solved, carried: Reactions, u: Array, name: str) -> Movement[A
     towards = clock(part.mate.si)
     along = np.cross(X_AXIS, towards)
     point = part.reference_diameter / 2 * towards
-    sense = np.array([case.sense for case in solved.model.cases] or [1], dtype=float)
+    sense = np.array([case.sense or 1.0 for case in solved.model.cases])  # where nothing turns: clockwise from left
     return GearMovement(name, own, load, _triple(point), _triple(towards), _triple(along), sense)
 
 
@@ -88,6 +92,18 @@ def _refuse_pulled_stops(solved: Solved, carried: Reactions) -> None:
             sentences.append(pulled_stop_sentence(model, model.supports[k], float(pull[case]), case))
     if sentences:
         raise LoadError("\n".join(sentences))
+
+
+def _refuse_misfits(solved: Solved, carried: Reactions) -> None:
+    """Pins in one place whose bores miss each other: nothing gives way, so no shaft fits both."""
+    table, node_of = solved.table, solved.grid.node_of
+    for k in np.flatnonzero(table.pin).tolist():
+        held = table.held[k]
+        weigh = np.where(np.arange(NDOF) < RX, 1.0, float(solved.model[table.shafts[k]].ends[-1]))
+        missed = np.abs(carried.relative(k)[held] * weigh[held, None]).max(initial=0.0)
+        if missed > MISFIT * np.abs(table.gap * weigh).max():
+            together = [name for name in table.names if node_of[name] == node_of[table.names[k]]]
+            raise LoadError(misfit_sentence(table.shafts[k], together))
 
 
 def _lines(solved: Solved, u: Array) -> dict[str, Line]:

@@ -140,12 +140,12 @@ def _merge(solutions: list[Solution], cases: list[NDArray[np.intp]]) -> Solution
     def join(arrays: list[Array]) -> Array:
         return np.concatenate(arrays, axis=-1)[..., order]
 
-    arrays = {name: join([getattr(s, name) for s in solutions]) for name in Solution._fields if name != "correction"}
+    arrays = {name: join([getattr(s, name) for s in solutions]) for name in Solution._fields[:-2]}
     weighed = [weighed_correction(solution) for solution in solutions]
     longest = max(len(step) for step, _ in weighed)
     padded = [[np.pad(each, ((0, longest - len(each)), (0, 0))) for each in pair] for pair in weighed]
     steps, totals = (join([pair[k] for pair in padded]) for k in (0, 1))
-    return Solution(**arrays, correction=(steps, totals, np.ones(longest)))
+    return Solution(**arrays, correction=(steps, totals, np.ones(longest)), resistance=solutions[0].resistance)
 
 
 def counted_twist(solved: Solved) -> Array:

@@ -15,13 +15,17 @@ from numpy.typing import NDArray
 
 from fe_shaft.errors import SolutionError
 from fe_shaft.fem.assembly import Reduction, Springs, scatter
-from fe_shaft.fem.dofs import NDOF
+from fe_shaft.fem.dofs import NDOF, UY
 from fe_shaft.fem.span import Spans, deformation_matrices
 
 Array = NDArray[np.float64]
 Ints = NDArray[np.intp]
 
 RESIDUAL_STEPS = 2
+BEYOND_PRECISION = (
+    "no trustworthy solution: stiffnesses differ by more powers of ten than double precision can hold. "
+    "Look for a diameter, a length or a stiffness far from the others; the numbers are withheld."
+)
 
 
 class Network(NamedTuple):
@@ -59,6 +63,9 @@ class Solution(NamedTuple):
         Largest residual of the free displacements, relative to the forces that meet there.
     correction : (n_free, n_cases), (n_free, n_cases), (n_free,)
         What the residual steps added to the free displacements, these, and the diagonal of their stiffness.
+    resistance : [N], [J]
+        The force with which the softest span resists the prescribed displacements, and its energy: the measure of
+        rounding where nothing but a bore out of line loads a shaft that gives way to it freely.
     """
 
     u: Array
@@ -68,6 +75,7 @@ class Solution(NamedTuple):
     unbalanced: Array
     residual: Array
     correction: tuple[Array, Array, Array]
+    resistance: tuple[float, float]
 
     @property
     def digits_lost(self) -> Array:
@@ -110,6 +118,7 @@ def solve(network: Network, load: Array, span_load: Array | None = None) -> Solu
     u = red.expand(q)
     unbalanced = law.matrix.T @ s - f
     cut = law.n_span_rows
+    resistance = _resistance(network)
     e = law.matrix[cut:] @ u
     if gap is not None:
         e -= gap[cut:]
@@ -119,9 +128,22 @@ def solve(network: Network, load: Array, span_load: Array | None = None) -> Solu
         spring_deformation=e.reshape(-1, NDOF, n_cases),
         spring_force=s[cut:].reshape(-1, NDOF, n_cases),
         unbalanced=unbalanced.reshape(n, NDOF, n_cases),
-        residual=_residual(red.contract(unbalanced), red.turning, s, float(network.spans.length.max())),
+        residual=_residual(red.contract(unbalanced), red.turning, s, resistance[0], float(network.spans.length.max())),
         correction=(q - first, q, system.diagonal),
+        resistance=resistance,
     )
+
+
+def _resistance(network: Network) -> tuple[float, float]:
+    """Force and energy with which the softest span resists the prescribed displacements; zeros without any."""
+    offset, gap = network.reduction.offset, network.springs.gap
+    if not (offset.any() or gap.any()):
+        return 0.0, 0.0
+    length = float(network.spans.length.sum())
+    weigh = np.repeat([1.0, length], NDOF // 2)
+    moved = float(max(np.abs(each.reshape(-1, NDOF) * weigh).max(initial=0.0) for each in (offset, gap)))
+    force = moved / float(network.spans.flexibility[:, UY].max())
+    return force, force * moved
 
 
 class _Law:
@@ -212,7 +234,7 @@ def _dense(k: Array) -> Callable[[Array], Array]:
 
     factor, info = lapack.dpotrf(k.T, lower=1)
     if info:
-        raise SolutionError("the stiffness matrix is not positive definite in working precision")
+        raise SolutionError(BEYOND_PRECISION)
     return lambda r: np.asarray(lapack.dpotrs(factor, r, lower=1)[0])
 
 
@@ -222,17 +244,18 @@ def _sparse(k: Any) -> Callable[[Array], Array]:
     try:
         lu = splu(k, permc_spec="MMD_AT_PLUS_A", diag_pivot_thresh=0.0, options={"SymmetricMode": True})
     except RuntimeError:
-        raise SolutionError("the stiffness matrix is singular in working precision") from None
+        raise SolutionError(BEYOND_PRECISION) from None
     solve: Callable[[Array], Array] = lu.solve
     return solve
 
 
-def _residual(free: Array, turning: NDArray[np.bool_], s: Array, length: float) -> Array:
+def _residual(free: Array, turning: NDArray[np.bool_], s: Array, least: float, length: float) -> Array:
     """Largest force or moment left over at the free displacements, relative to the forces in the parts.
 
-    Moments are turned into forces by the length of the longest span.
+    Moments are turned into forces by the length of the longest span; forces below `least` are measured by it.
     """
-    largest = np.abs(s).reshape(-1, NDOF, s.shape[1]).max(axis=0, initial=np.finfo(float).tiny)
+    least = max(least, np.finfo(float).tiny)
+    largest = np.abs(s).reshape(-1, NDOF, s.shape[1]).max(axis=0, initial=least)
     largest[NDOF // 2 :] /= length
     left = np.abs(free)
     left[turning] /= length

@@ -15,7 +15,8 @@ Ints = NDArray[np.intp]
 
 #: A cone is cut until its diameters differ by no more than this ratio; eight Gauss points are then exact to rounding.
 CONE_RATIO = 1.2
-GAUSS_CYLINDER = np.polynomial.legendre.leggauss(2)
+#: Exact to the fifth power: the energy of a spread load goes with the square of a moment that grows with the square.
+GAUSS_CYLINDER = np.polynomial.legendre.leggauss(3)
 GAUSS_CONE = np.polynomial.legendre.leggauss(8)
 
 
@@ -101,7 +102,7 @@ class Pieces:
         Distance of the piece from its span's left node, and its length.
     segment : (m,)
         The segment each piece was cut from.
-    first, last_share : (m,) or None
+    share_left, share_right : (m,) or None
         Where in its segment a piece begins and ends, 0 to 1; None without cones.
     chains : first piece of each further chain of spans (a model's other shafts)
     """
@@ -171,7 +172,7 @@ class Pieces:
 
     @cached_property
     def points(self) -> Points:
-        """Two Gauss points a cylinder (exact for a cubic), eight a cone."""
+        """Three Gauss points a cylinder, eight a cone."""
         nodes, weights = GAUSS_CONE if self.tapered else GAUSS_CYLINDER
         share = ((nodes + 1) / 2)[:, None]
         eta, weight = share * self.length, (weights / 2)[:, None] * self.length

@@ -94,7 +94,7 @@ class GearMovement(Movement[Number]):
     ----------
     point : (3,) [m], from the axis to the pitch point
     towards_mate, along : (3,) unit vectors: to the mate's axis; along the pitch circle, clockwise from left
-    sense : (n_cases,) or a number: +1 turns clockwise from left, -1 the other way
+    sense : (n_cases,) or a number: +1 turns clockwise from left, or not at all; -1 the other way
     """
 
     point: tuple[float, float, float]

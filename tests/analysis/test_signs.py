@@ -129,12 +129,12 @@ def beam(middle, *loads):
 def test_a_bore_out_of_line_takes_the_shaft_with_it(kind, angle, up, front):
     place = {"at": "100 mm", "holds": ["radial"], "offset": "20 um", "offset_angle": angle}
     stiff = {"stiffness": {"radial": "1e15 N/m", "range_check": "off"}}
-    middle = fs.Pin("middle", **place) if kind == "pin" else fs.Bearing("middle", **place, **stiff)
+    middle = fs.Pin("mid", **place) if kind == "pin" else fs.Bearing("mid", **place, **stiff)
     results = beam(middle)
-    assert results["middle"].up_um == pytest.approx(up, abs=1e-5)
-    assert results["middle"].front_um == pytest.approx(front, abs=1e-5)
+    assert results["mid"].up_um == pytest.approx(up, abs=1e-5)
+    assert results["mid"].front_um == pytest.approx(front, abs=1e-5)
     # the bore pulls the shaft its way, the other pins pull it back
-    assert results["middle"].wrench[1:3] @ [up, front] > 0
+    assert results["mid"].wrench[1:3] @ [up, front] > 0
     assert results["lay_left"].wrench[1:3] @ [up, front] < 0
 
 
@@ -253,7 +253,7 @@ def test_the_layshaft_of_the_interface():
         radial = tangential * math.tan(math.radians(20)) / math.cos(math.radians(beta))
         away = 1 if name == "wheel" else -1  # the wheel's mate is at the back, the pinion's in front
         np.testing.assert_allclose(results[name].load[:3], [axial, tangential, away * radial], rtol=1e-12)
-        assert tuple(round(v) for v in results[name].load[:3]) == printed
+        assert results[name].load[:3] == pytest.approx(printed, abs=0.7)  # the mock-up cuts one of them off
     assert round(results["lay_right"].axial_force_N) == 567  # the thrust of 567 N to the left is held
 
 
@@ -346,13 +346,19 @@ def test_belts_and_chains_pull_towards_the_clock(clock, up, front, turns):
         assert load[3] == (100 if turns.startswith("clock") else -100)
 
 
-def test_belt_strands_add_as_vectors():
-    """sqrt(F1^2 + F2^2 - 2 F1 F2 cos(wrap)); 120 deg between the strands' backs."""
+@pytest.mark.parametrize(("turns", "aside"), [("clockwise from left", -1), ("counterclockwise from left", 1)])
+def test_belt_strands_add_as_vectors(turns, aside):
+    """120 deg of wrap: each strand leans 30 deg outwards, so the sum is sqrt(F1^2 + F2^2 - 2 F1 F2 cos 120 deg).
+
+    Driven clockwise by a belt that comes from above, the rim is pulled up where it turns up: at 9 o'clock, the back.
+    """
     pulley = fs.Pulley(
         "wheel", at="80 mm", diameter="100 mm", belt_pull={"tight": "900 N", "slack": "300 N"}, wrap="120 deg",
         pulls_towards="12 o'clock",
     )  # fmt: skip
-    assert load_of(geared(pulley), "wheel")[1] == pytest.approx(math.sqrt(900**2 + 300**2 + 900 * 300), rel=1e-12)
+    load = load_of(geared(pulley, turns=turns), "wheel")
+    assert math.hypot(load[1], load[2]) == pytest.approx(math.sqrt(900**2 + 300**2 + 900 * 300), rel=1e-12)
+    assert load[2] == pytest.approx(aside * 600 * math.sin(math.radians(30)), rel=1e-12)
 
 
 def test_separation_is_away_from_the_mate_and_tangential_is_with_the_turning():

@@ -2,6 +2,7 @@
 
 import numpy as np
 import pytest
+
 from fe_shaft.fem.frames import move_wrench, rigid_link
 from fe_shaft.fem.span import (
     Recovery,
@@ -13,7 +14,6 @@ from fe_shaft.fem.span import (
     gather_uniform,
     load_deformation,
 )
-
 from tests.fem.chains import NU, RHO, E, G, chain, condensed
 
 CYLINDER_I = np.pi / 64 * 0.04**4
