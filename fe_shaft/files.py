@@ -17,7 +17,7 @@ from fe_shaft.errors import FileError, quote
 
 
 def write_whole(path: str | os.PathLike[str], content: bytes | str) -> None:
-    """Write a file, wholly or not at all.
+    r"""Write a file, wholly or not at all.
 
     Parameters
     ----------
@@ -25,7 +25,7 @@ def write_whole(path: str | os.PathLike[str], content: bytes | str) -> None:
         Its folder must exist. A symbolic link stays one: the file it points to is replaced. What is not an ordinary
         file (a terminal, a pipe) is written to directly.
     content : bytes or str
-        Text is written as UTF-8 with ``\\n`` at line ends.
+        Text is written as UTF-8 with ``\n`` at line ends.
 
     Raises
     ------
@@ -88,7 +88,7 @@ def whole(path: str | os.PathLike[str]) -> Iterator[Path]:
         try:
             yield temporary
             _to_disk(temporary)
-            os.replace(temporary, target)
+            os.replace(temporary, target)  # noqa: PTH105 - what the fault injection of the tests takes hold of
         except BaseException:
             with contextlib.suppress(OSError):
                 temporary.unlink(missing_ok=True)

@@ -4,8 +4,9 @@ import subprocess
 import sys
 from pathlib import Path
 
-import fe_shaft as fs
 import pytest
+
+import fe_shaft as fs
 
 EXAMPLES = Path(__file__).resolve().parent.parent / "examples"
 MODELS = sorted(EXAMPLES.glob("*.toml"))

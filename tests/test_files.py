@@ -60,7 +60,7 @@ def test_a_link_stays_a_link(tmp_path: Path, target: Path) -> None:
 
 def _full_disk(path: Path, data: bytes) -> int:
     """Half of the data reaches the disk, then it is full."""
-    with open(path, "wb") as file:
+    with open(path, "wb") as file:  # noqa: PTH123
         file.write(data[: len(data) // 2])
     raise OSError(errno.ENOSPC, "No space left on device")
 

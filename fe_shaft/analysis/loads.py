@@ -100,7 +100,7 @@ def _gravity(model: Model, grid: Grid) -> Array:
 
 
 class Balance(NamedTuple):
-    """A torque that the tool takes out so that a shaft that can spin stays where it is."""
+    """Torques (n_cases,) [N m] that the tool takes out at a part so that a shaft that can spin stays where it is."""
 
     shaft: str
     part: str
@@ -115,18 +115,20 @@ def balance_torque(model: Model, spinning: set[str]) -> list[Balance]:
     LoadError
         Where nothing takes it out.
     """
-    out, sentences = [], []
+    out: list[Balance] = []
+    sentences = []
     for shaft in (each.name for each in model.shafts if each.name in spinning):
         statics = model.statics[shaft]
-        left_over, stuck = statics.resultant[3], {}
+        left_over, takers = statics.resultant[3], _takers(model, shaft)
+        stuck: dict[int, float] = {}
+        taken: dict[str, Array] = {}
         for k in np.flatnonzero(np.abs(left_over) > BALANCED * statics.turning).tolist():
-            part = _taker(model, shaft, k)
+            part = takers[k]
             if part is None:
                 stuck[k] = float(left_over[k])
-                continue
-            torque = np.zeros(len(left_over))
-            torque[k] = -left_over[k]
-            out.append(Balance(shaft, part, torque))
+            else:
+                taken.setdefault(part, np.zeros(len(left_over)))[k] = -left_over[k]
+        out += [Balance(shaft, part, torque) for part, torque in taken.items()]
         if stuck:
             sentences.append(spin_sentence(model, shaft, stuck))
     if sentences:
@@ -134,14 +136,14 @@ def balance_torque(model: Model, spinning: set[str]) -> list[Balance]:
     return out
 
 
-def _taker(model: Model, shaft: str, k: int) -> str | None:
-    """The part of a shaft at which torque leaves in case k: the tool balances there and counts twist from there."""
-    names = [name for name in model.cases[k].leaves_shares if model.places[name].shaft == shaft]
-    return names[0] if names else None
+def _takers(model: Model, shaft: str) -> list[str | None]:
+    """The part of a shaft at which torque leaves, by case: the tool balances there and counts twist from there."""
+    places = model.places
+    return [next((name for name in case.leaves_shares if places[name].shaft == shaft), None) for case in model.cases]
 
 
 def twist_reference(model: Model, grid: Grid, shaft: str) -> tuple[int, list[str | None]]:
     """Node at which the spin of a free shaft is held, and the part from which twist is counted in each case."""
-    names = [_taker(model, shaft, k) for k in range(len(model.cases))]
+    names = _takers(model, shaft)
     held = next((n for n in names if n is not None), None)
     return (grid.shafts[shaft].nodes.start if held is None else grid.node_of[held]), names

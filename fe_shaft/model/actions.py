@@ -170,9 +170,9 @@ def _pull(model: Model, wheel: Pulley | Sprocket, torque: Array | None) -> Actio
 def _strands(pulley: Pulley, belt: BeltPull, towards: Array, turning: Array) -> Array:
     """Both strands of a belt as vectors, (n_cases, 3).
 
-    Each strand leaves at an angle of (180 deg - wrap) / 2 to the line towards the other pulley; the tight one on the side
-    from which it turns the pulley the way it turns. Without a torque nothing says which side that is, and only the
-    part along that line counts.
+    Each strand leaves at an angle of (180 deg - wrap) / 2 to the line towards the other pulley; the tight one on the
+    side from which it turns the pulley the way it turns. Without a torque nothing says which side that is, and only
+    the part along that line counts.
     """
     tight, slack, lean = belt.tight.si, belt.slack.si, (math.pi - pulley.wrap.si) / 2
     aside = -np.sign(turning)[:, None] * np.cross(X_AXIS, towards)

@@ -3,13 +3,13 @@
 from __future__ import annotations
 
 from collections.abc import Iterator
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from typing import TYPE_CHECKING, Any
 
 import numpy as np
 from numpy.typing import NDArray
 
-from fe_shaft.errors import UsageError
+from fe_shaft.errors import UsageError, nearest
 from fe_shaft.results.quantity import QUANTITIES
 
 if TYPE_CHECKING:
@@ -19,6 +19,8 @@ Array = NDArray[np.float64]
 
 
 END_WORDS = {"low": "soft", "high": "stiff"}
+#: Values below this share of the largest of their kind are rounding; results hold at least 1e-11.
+ROUNDING = 1e-11
 
 
 @dataclass(frozen=True)
@@ -60,6 +62,7 @@ class Row:
     left, right : the two results (pins, bearings as given)
     low, high, worst : the right one over its estimates; None where nothing is estimated
     worst_mix : words, one a case
+    rounding : size below which a value of this kind is nothing but rounding
     """
 
     part: str
@@ -70,6 +73,7 @@ class Row:
     high: Array | None = None
     worst: Array | None = None
     worst_mix: tuple[str, ...] = ()
+    rounding: Array | float = 0.0
 
     @property
     def difference(self) -> Array:
@@ -78,14 +82,14 @@ class Row:
 
     @property
     def ratio(self) -> Array:
-        """Right over left; NaN where the left one is nothing against the right one."""
-        nothing = np.abs(self.left) <= 1e-9 * np.maximum(np.abs(self.right), np.finfo(float).tiny)
+        """Right over left; NaN where the left one is nothing, by itself or against the right one."""
+        nothing = np.abs(self.left) <= np.maximum(self.rounding, 1e-9 * np.abs(self.right))
         return np.asarray(np.where(nothing, np.nan, self.right / np.where(nothing, 1.0, self.left)))
 
     @property
     def share(self) -> Array:
         """Share of the right value that is not in the left one: what bearings and seats make."""
-        nothing = self.right == 0
+        nothing = np.abs(self.right) <= self.rounding
         return np.asarray(np.where(nothing, 0.0, 1 - self.left / np.where(nothing, 1.0, self.right)))
 
     @property
@@ -133,7 +137,8 @@ class Comparison:
         for row in self.rows:
             if (row.part, row.quantity) == (part, quantity):
                 return row
-        raise UsageError(f'the comparison has no row "{address}".')
+        known = (f"{row.part}.{row.quantity}" for row in self.rows)
+        raise UsageError(f'the comparison has no row "{address}". {nearest(address, known)}'.rstrip())
 
     def __iter__(self) -> Iterator[Row]:
         return iter(self.rows)
@@ -180,10 +185,14 @@ def common_rows(left: Results, right: Results, mixes: Mixes | None) -> tuple[Row
     for name, part in right.parts.items():
         if name not in left.parts:
             continue
-        for quantity in compared_quantities(part.kind):
-            if hasattr(left.parts[name], quantity) and quantity in QUANTITIES:
-                rows.append(_row(left, right, mixes, name, quantity))
-    return tuple(rows)
+        known = left.parts[name].quantities()
+        rows += [_row(left, right, mixes, name, key) for key in compared_quantities(part.kind) if key in known]
+    largest: dict[str, Array] = {}
+    for row in rows:
+        kind = QUANTITIES[row.quantity].dimension
+        size = np.maximum(np.abs(row.left), np.abs(row.right))
+        largest[kind] = np.maximum(largest[kind], size) if kind in largest else size
+    return tuple(replace(row, rounding=ROUNDING * largest[QUANTITIES[row.quantity].dimension]) for row in rows)
 
 
 def _row(left: Results, right: Results, mixes: Mixes | None, name: str, quantity: str) -> Row:

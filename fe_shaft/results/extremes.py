@@ -8,12 +8,14 @@ from __future__ import annotations
 import numpy as np
 from numpy.typing import NDArray
 
+from fe_shaft.errors import UsageError, nearest
 from fe_shaft.results.line import Line
 
 Array = NDArray[np.float64]
 
 MOST_VALUES = 200_000  # places times cases asked at once along one shaft; beyond, stations alone
 CLOSER = 33  # places around the largest value, asked twice
+KINDS = ("deflection", "slope", "bending_moment", "torque")
 
 
 def largest_along(line: Line, quantity: str) -> tuple[Array, Array]:
@@ -28,7 +30,14 @@ def largest_along(line: Line, quantity: str) -> tuple[Array, Array]:
     -------
     value, x : (n_cases,) [m, rad or N m], [m]
         Exact at x. A larger value can hide only between two places that are asked, 9 to a span of the grid.
+
+    Raises
+    ------
+    UsageError
+        No such quantity.
     """
+    if quantity not in KINDS:
+        raise UsageError(f'a shaft has no largest "{quantity}". {nearest(quantity, KINDS)}')
     value, x = _at_stations(line, quantity)
     places = _places(line, len(value))
     between = _values(line, places, quantity)

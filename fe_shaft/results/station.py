@@ -89,6 +89,6 @@ class ShaftCase:
         return station
 
     def largest(self, quantity: str) -> tuple[float, float]:
-        """Largest value along the shaft and its place [m]; deflection, slope or bending_moment."""
+        """Largest value along the shaft and its place [m]; see `ShaftResults.largest`."""
         value, x = self.shaft.largest(quantity)
         return float(value[self.k]), float(x[self.k])

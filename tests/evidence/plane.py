@@ -108,9 +108,7 @@ class Plane:
         up, front = size * self.toward
         return fs.Force(name, at=text(x, "m"), couple={"up": text(-front, "N m"), "front": text(up, "N m")})
 
-    def solve(
-        self, segments: Sequence[fs.Segment], *parts: Any, shear: float | str = "none", **heading: Any
-    ) -> Bent:
+    def solve(self, segments: Sequence[fs.Segment], *parts: Any, shear: float | str = "none", **heading: Any) -> Bent:
         """Solve a shaft of the test's steel."""
         shaft = fs.Shaft("shaft", list(segments), material=STEEL.name, shear=shear)
         return Bent(self, fs.solve(fs.Model("beam", [shaft, *parts], materials=[STEEL], **heading)))

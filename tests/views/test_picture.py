@@ -85,10 +85,10 @@ def test_pictures_of_the_same_results_are_alike(tmp_path):
 
 
 def test_a_comparison_brings_both_halves_and_two_models_are_refused():
-    import fe_shaft as fs
     import pytest
-    from fe_shaft.views.halves import halves
 
+    import fe_shaft as fs
+    from fe_shaft.views.halves import halves
     from tests.views.demo import layshaft
 
     model = layshaft()
