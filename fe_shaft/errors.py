@@ -131,6 +131,11 @@ def nearest(word: str, known: Iterable[str]) -> str:
     return f"Known: {', '.join(choices)}." if 0 < len(choices) <= 8 else ""
 
 
+def wrong_kind(verb: str, wanted: str, given: object, remedy: str) -> UsageError:
+    """What to raise when a function is given something else: ``solve takes a Model, not str. Write ...``"""
+    return UsageError(f"{verb} takes {wanted}, not {type(given).__name__}. {remedy}")
+
+
 def quote(text: str, longest: int = 40) -> str:
     """Text of the user in double quotes, fit to be printed: cut, control characters as escapes.
 

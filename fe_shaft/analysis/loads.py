@@ -9,9 +9,10 @@ import numpy as np
 from numpy.typing import NDArray
 
 from fe_shaft.analysis.discretise import load_edges
-from fe_shaft.analysis.motion_words import spin_sentence
+from fe_shaft.analysis.load_words import spin_sentence
 from fe_shaft.errors import LoadError
 from fe_shaft.fem.dofs import NDOF
+from fe_shaft.fem.frames import move_wrench
 from fe_shaft.fem.span import Gathered, Spans, end_load, gather_mass, gather_uniform, load_deformation
 from fe_shaft.model.actions import case_names, gravity_in_shaft
 
@@ -79,17 +80,9 @@ def _spread(grid: Grid, actions: Sequence[Action], nodal: Array) -> Array | None
         first, last = load_edges(action, float(grid.x[own.nodes][-1]))
         middle = (grid.x[grid.left[own.spans]] + grid.x[grid.right[own.spans]]) / 2
         under = own.spans.start + np.flatnonzero((middle > first) & (middle < last))
-        density[under] += _about((first + last) / 2, action).T / (last - first)
+        about_middle = move_wrench(action.wrench, (action.x - (first + last) / 2, 0.0, 0.0))
+        density[under] += about_middle.T / (last - first)
     return density
-
-
-def _about(x: float, action: Action) -> Array:
-    """Wrench of an action about another place on the axis, (n_cases, 6)."""
-    wrench = action.wrench.copy()
-    lever = action.x - x
-    wrench[:, 4] -= lever * wrench[:, 2]
-    wrench[:, 5] += lever * wrench[:, 1]
-    return wrench
 
 
 def _gravity(model: Model, grid: Grid) -> Array:

@@ -5,19 +5,16 @@ Such as: "layshaft can slide along its axis: no support holds it axially; 567 N 
 
 from __future__ import annotations
 
-import re
-import textwrap
-from collections.abc import Iterator, Mapping, Sequence
-from typing import TYPE_CHECKING, Any
+from collections.abc import Iterator, Sequence
+from typing import TYPE_CHECKING
 
 import numpy as np
 from numpy.typing import NDArray
 
 from fe_shaft.analysis.free_space import FRONT, NOISE, SLIDE, SPIN, UP, FreeSpace
-from fe_shaft.errors import WIDTH, quote
+from fe_shaft.analysis.remedies import best, let_hold, names_of, says, told
 from fe_shaft.fem.dofs import RX, RY, RZ, UX, UY, UZ
-from fe_shaft.model.groups import CARRIERS
-from fe_shaft.model.support import HOLDS, Bearing, Pin
+from fe_shaft.model.support import Bearing, Pin
 from fe_shaft.results.words.wording import clock_hours, is_level, listed
 from fe_shaft.units import show
 
@@ -33,9 +30,6 @@ SAME_PLACE = 1e-6
 WORTH_A_WORD = 0.02
 #: An axial load below this share of all loads is the rounding of thrusts that cancel.
 NO_PUSH = 1e-9
-
-NO_BREAK = "\N{NO-BREAK SPACE}"
-_EXAMPLES = {"radial": "93 N/um", "axial": "60 N/um", "tilt": "50 N m/mrad"}
 
 
 def sentences_of(model: Model, shaft: str, free: FreeSpace, push: int, cases: NDArray[np.intp]) -> Iterator[str]:
@@ -75,7 +69,7 @@ class _Words:
         """The sentence, with file and line where they are known, and the remedy below."""
         file, line = self.model.source_lines.get(self.shaft, ("", None))
         where = f"{file}:{line} {self.shaft}" if file else self.shaft
-        return _told(f"{where} {fact}", remedy)
+        return told(f"{where} {fact}", remedy)
 
     def saying(self, *held: str) -> list[Support]:
         """Supports whose `holds` has one of these words."""
@@ -121,12 +115,12 @@ def _slide(words: _Words, push: int, cases: NDArray[np.intp]) -> tuple[str, str]
     if push and stops:
         way, kept = ("right", "left") if push > 0 else ("left", "right")
         keep = "keeps" if len(stops) == 1 else "keep"
-        fact = f"can slide to the {way}: {_names(stops)} {keep} it only from moving {kept}"
-        return f"{fact}{pushed}.", _hold(stops[-1], "axial")
+        fact = f"can slide to the {way}: {names_of(stops)} {keep} it only from moving {kept}"
+        return f"{fact}{pushed}.", let_hold(stops[-1], "axial")
     if empty:
-        fact = f'can slide along its axis: {_names(empty)} {_say(empty)} "axial" without a stiffness there'
+        fact = f'can slide along its axis: {names_of(empty)} {says(empty)} "axial" without a stiffness there'
         return f"{fact}{pushed}.", f"Give the matrix of {empty[-1].name} (or of its seat) an axial stiffness, at ux."
-    remedy = _hold(_best(words.supports, "radial"), "axial")
+    remedy = let_hold(best(words.supports, "radial"), "axial")
     hint = _one_way_hint(words, cases)
     return f"can slide along its axis: no support holds it axially{pushed}.", remedy + (f"\n  {hint}" if hint else "")
 
@@ -195,8 +189,8 @@ def _in_plane(words: _Words, direction: str, plane: Array, dofs: list[int]) -> t
     if pivot is not None:
         return _swing(words, direction, pivot, radial, there)
     firm = words.resisting([RY, RZ])
-    fact = f"can shift {direction}: {_names(firm)} {_say(firm)} it only against tilting{there}."
-    return fact, _hold(_best(firm, "tilt"), "radial")
+    fact = f"can shift {direction}: {names_of(firm)} {says(firm)} it only against tilting{there}."
+    return fact, let_hold(best(firm, "tilt"), "radial")
 
 
 def _swing(words: _Words, direction: str, pivot: float, radial: list[Support], there: str) -> tuple[str, str]:
@@ -210,15 +204,15 @@ def _swing(words: _Words, direction: str, pivot: float, radial: list[Support], t
         centre = f" (its load centre, {spot})" if off_ring else ""
         return f"can swing {direction} about {at[0].name}{centre}: no other support holds it radially{there}.", remedy
     where = f"where their load centres meet, {spot}" if off_ring else spot
-    return f"can swing {direction} about {_names(at)}: they hold it radially in one place, {where}.", remedy
+    return f"can swing {direction} about {names_of(at)}: they hold it radially in one place, {where}.", remedy
 
 
 def _two_radial(words: _Words) -> str:
     if words.saying("radial"):
         return _full_rank(words, words.saying("radial"))
     if len(words.supports) == 1:
-        return f"{_hold(words.supports[0], 'radial')}, and add a second support that does."
-    return f"{_hold(words.supports[0], 'radial')}\n  {_hold(words.supports[-1], 'radial')}"
+        return f"{let_hold(words.supports[0], 'radial')}, and add a second support that does."
+    return f"{let_hold(words.supports[0], 'radial')}\n  {let_hold(words.supports[-1], 'radial')}"
 
 
 def _second_radial(words: _Words, others: list[Support], pivot: Support) -> str:
@@ -226,7 +220,7 @@ def _second_radial(words: _Words, others: list[Support], pivot: Support) -> str:
     if not others:
         return f"Add a second support that holds radial, or {tilt}."
     weak = [support for support in others if "radial" in support.holds]
-    add = f"Give {_names(weak)} a stiffness in that direction too" if weak else _hold(others[-1], "radial")
+    add = f"Give {names_of(weak)} a stiffness in that direction too" if weak else let_hold(others[-1], "radial")
     return f"{add}, or {tilt}."
 
 
@@ -240,7 +234,7 @@ def _mixed(words: _Words, motion: Array) -> tuple[str, str]:
     if more:
         fact += f" while it {listed([second for _, second in more])}"
     culprits = words.matrices
-    reason = f"the stiffness of {_names(culprits)} does not resist that" if culprits else "no support resists that"
+    reason = f"the stiffness of {names_of(culprits)} does not resist that" if culprits else "no support resists that"
     return f"{fact}: {reason}.", _full_rank(words, culprits)
 
 
@@ -260,100 +254,9 @@ def _verbs(motion: Array) -> Iterator[tuple[str, str]]:
             yield verb + after[verb], verb + "s" + after[verb]
 
 
-# ---- remedies
-
-
-def _told(fact: str, remedy: str) -> str:
-    """The sentence, and the remedy indented below it, no wider than the terminal."""
-    return "\n".join(_wrapped(line) for line in (fact, *(f"  {line.strip()}" for line in remedy.split("\n"))))
-
-
-def _wrapped(line: str) -> str:
-    """Broken between words, but not between a number and its unit."""
-    tied = re.sub(r"(?<=\d) (?=\S)", NO_BREAK, line)
-    return textwrap.fill(tied, WIDTH, subsequent_indent="    ", break_long_words=False).replace(NO_BREAK, " ")
-
-
 def _full_rank(words: _Words, supports: Sequence[Support]) -> str:
     """Those of the supports that give by a matrix shall resist more."""
     culprits = [support for support in supports if support in words.matrices]
     if not culprits:
         return "Add a support that holds it there."
-    return f"Give {_names(culprits)} a stiffness in that direction too, or add a support that holds it there."
-
-
-def _names(supports: Sequence[Support]) -> str:
-    return listed([support.name for support in supports])
-
-
-def _say(supports: Sequence[Support]) -> str:
-    return "holds" if len(supports) == 1 else "hold"
-
-
-def _best(supports: Sequence[Support], word: str) -> Support:
-    """The support to change: the last that holds a word already, else the last."""
-    with_it = [support for support in supports if word in support.holds]
-    return (with_it or list(supports))[-1]
-
-
-def _hold(support: Support, word: str) -> str:
-    """What to write so that a support holds more; a bearing needs a stiffness as well."""
-    kept = {each for each in support.holds if not (word == "axial" and each.startswith("stops_"))}
-    holds = ", ".join(quote(each) for each in HOLDS if each in kept | {word})
-    return f"Write in {support.name}   holds = [{holds}]{_missing_stiffness(support, word)}"
-
-
-def _missing_stiffness(support: Any, word: str) -> str:
-    if not isinstance(support, Bearing) or support.stiffness is None:
-        return ""
-    keys = {"radial": {"radial", "up"}, "axial": {"axial"}, "tilt": {"tilt", "tilt_up"}}[word]
-    return "" if support.stiffness.given & keys else f' and its stiffness.{word}, such as "{_EXAMPLES[word]}"'
-
-
-# ---- spin under a torque that nothing takes out
-
-
-def spin_sentence(model: Model, shaft: str, torques: Mapping[int, float]) -> str:
-    """A shaft that can spin, the torque left over in each case (by number) and the remedy."""
-    k = max(torques, key=lambda number: abs(torques[number]))
-    way = "clockwise" if torques[k] > 0 else "counterclockwise"
-    named = len(model.written_cases) > 1
-    where = f" in case {model.cases[k].name}" if named else ""
-    others = [model.cases[number].name for number in torques if number != k]
-    likewise = f" (likewise in {_short_list(others)})" if others else ""
-    fact = f"{shaft} can spin: {show(abs(torques[k]), 'N m')} turn it {way}, seen from its left end,{where}"
-    return _told(f"{fact.rstrip(',')}, and nothing takes them out{likewise}.", _take_out(model, shaft, k))
-
-
-def _short_list(names: Sequence[str]) -> str:
-    return listed(names if len(names) <= 4 else [*names[:3], f"{len(names) - 3} more"])
-
-
-def _take_out(model: Model, shaft: str, k: int) -> str:
-    """Where power enters, it can be said where it leaves; a torque of forces and weights needs a hold."""
-    hold = 'let a pin hold "spin".'
-    case = model.cases[k]
-    if not case.enters_shares or case.leaves_shares:
-        return f"Balance it by a couple.axial, or {hold}"
-    here = [part for part in model.parts_on_shafts if model.places[part.name].shaft == shaft]
-    free = [part.name for part in here if isinstance(part, CARRIERS) and part.name not in case.enters_shares]
-    return f"Write in case {case.name}   leaves = {quote(free[0] if free else '...')}   or {hold}"
-
-
-# ---- stops that would have to pull, pins that do not fit
-
-
-def pulled_stop_sentence(model: Model, stop: Support, pull: float, k: int) -> str:
-    """A one-way stop that the shaft moves away from, the force [N] it would have to pull with, and the remedy."""
-    shaft, kept = model.places[stop.name].shaft, "left" if "stops_left" in stop.holds else "right"
-    where = f" in case {model.cases[k].name}" if len(model.written_cases) > 1 else ""
-    fact = f"{shaft} pulls away from {stop.name} with {show(pull, 'N')}{where}"
-    return _told(
-        f"{fact}, but {stop.name} only keeps it from moving {kept}.", f"{_hold(stop, 'axial')}, or take its stop out."
-    )
-
-
-def misfit_sentence(shaft: str, pins: Sequence[str]) -> str:
-    """Pins in one place whose bores lie apart, and the remedy."""
-    fact = f"{shaft} does not fit {listed(pins)}: they hold it rigidly in one place, but their bores lie apart."
-    return _told(fact, "Give them the same offset and bore_tilt, or let one of them be a bearing that gives way.")
+    return f"Give {names_of(culprits)} a stiffness in that direction too, or add a support that holds it there."

@@ -20,6 +20,9 @@ from fe_shaft.results.proof import REFUSED_ABOVE, Proof
 
 Array = NDArray[np.float64]
 TINY = np.finfo(float).tiny
+#: Of the force with which the shafts would resist their offsets: far below any force that an offset makes, far above
+#: the rounding of that resistance (1e-16).
+ROUNDING_FLOOR = 1e-4
 
 
 def prove(solved: Solved, carried: Reactions) -> Proof:
@@ -56,7 +59,9 @@ def _equilibrium(solved: Solved, carried: Reactions, shaft: str) -> Array:
     for balance in solved.balances:
         if balance.shaft == shaft:
             total[3] += balance.torque
-    size = statics.size + np.abs(wrench[:, :3]).sum(axis=(0, 1)) + solved.solution.resistance[0] + TINY
+    size = statics.size + np.abs(wrench[:, :3]).sum(axis=(0, 1)) + TINY
+    if solved.table.gaps:  # an offset that meets no resistance leaves nothing but rounding to compare with
+        size = np.maximum(size, ROUNDING_FLOOR * solved.solution.resistance[0])
     imbalance: Array = np.abs(total).reshape(2, 3, -1).max(axis=1) / size
     imbalance[1] /= statics.arm
     return imbalance

@@ -8,7 +8,8 @@ import numpy as np
 from numpy.typing import NDArray
 
 from fe_shaft.analysis.solution import Solved
-from fe_shaft.fem.dofs import NDOF, RX, RY, RZ, UY, UZ
+from fe_shaft.fem.dofs import NDOF, RX
+from fe_shaft.fem.frames import move_wrench
 
 Array = NDArray[np.float64]
 
@@ -59,7 +60,8 @@ def _pin_wrenches(solved: Solved, holding: NDArray[np.bool_], unbalanced: Array)
         together.setdefault(solved.grid.node_of[table.names[k]], []).append(k)
     for node, pins in together.items():
         if len(pins) == 1:
-            wrench[pins[0]] = _at_centre(unbalanced[node], table.centre[pins[0]]) * held[pins[0]][:, None]
+            at_centre = move_wrench(unbalanced[node].T, (-table.centre[pins[0]], 0.0, 0.0)).T
+            wrench[pins[0]] = at_centre * held[pins[0]][:, None]
             continue
         rows = np.concatenate([table.links[k][held[k]] for k in pins])
         share = np.linalg.lstsq(rows.T, unbalanced[node], rcond=None)[0]
@@ -67,11 +69,3 @@ def _pin_wrenches(solved: Solved, holding: NDArray[np.bool_], unbalanced: Array)
             count = int(held[pin].sum())
             wrench[pin][held[pin]], share = share[:count], share[count:]
     return wrench
-
-
-def _at_centre(wrench: Array, centre: float) -> Array:
-    """The wrench at a node, seen from a load centre to its right."""
-    moved = wrench.copy()
-    moved[RY] += centre * wrench[UZ]
-    moved[RZ] -= centre * wrench[UY]
-    return moved

@@ -13,8 +13,9 @@ from fe_shaft.analysis.motions import require_held
 from fe_shaft.analysis.supports import SupportPlan, plan_supports
 from fe_shaft.fem.assembly import Constraint, reduce
 from fe_shaft.fem.dofs import NDOF, RX
-from fe_shaft.fem.linear import Network, Solution, solve, weighed_correction
+from fe_shaft.fem.linear import Solution, solve, weighed_correction
 from fe_shaft.fem.span import Flexibility, Spans, condense, flexibility
+from fe_shaft.fem.system import Network
 from fe_shaft.model.actions import Action, case_names
 
 if TYPE_CHECKING:

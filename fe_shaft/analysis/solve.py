@@ -8,7 +8,7 @@ from typing import TYPE_CHECKING
 from fe_shaft.analysis.bands import solve_mixes
 from fe_shaft.analysis.recovery import solve_once
 from fe_shaft.analysis.verdicts import judge
-from fe_shaft.errors import FreeMotionError, LoadError, UsageError
+from fe_shaft.errors import FreeMotionError, LoadError, SolutionError, UsageError, wrong_kind
 from fe_shaft.model.differences import differences
 from fe_shaft.results.comparison import Comparison, common_rows
 
@@ -28,17 +28,27 @@ def solve(model: Model) -> Results:
         Something can move freely, or a load cannot be carried.
     SolutionError
         The proof failed; no numbers are returned.
+    UsageError
+        What is given is no model.
     """
+    _require_model("solve", model)
     results = solve_once(model)
     if not model.limits:
         return results
     return replace(results, verdicts=judge(results, _on_pins(model), solve_mixes(model)))
 
 
+def _require_model(verb: str, given: object) -> None:
+    from fe_shaft.model.system import Model
+
+    if not isinstance(given, Model):
+        raise wrong_kind(verb, "a Model", given, 'Read one from a file with read("layshaft.toml").')
+
+
 def _on_pins(model: Model) -> Results | None:
     try:
         return solve_once(model.pinned())
-    except (FreeMotionError, LoadError):
+    except (FreeMotionError, LoadError, SolutionError):
         return None
 
 
@@ -50,9 +60,11 @@ def compare(model: Model, other: Model | None = None) -> Comparison:
     Raises
     ------
     UsageError
-        Two models without a common case.
+        Two models without a common case, or what is given is no model.
     """
+    _require_model("compare", model)
     if other is not None:
+        _require_model("compare", other)
         return _compare_models(model, other)
     results = solve_once(model)
     try:

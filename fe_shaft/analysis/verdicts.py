@@ -9,7 +9,7 @@ import numpy as np
 from numpy.typing import NDArray
 
 from fe_shaft.results.comparison import Mixes
-from fe_shaft.results.verdict import Band, Verdict
+from fe_shaft.results.verdict import Band, Verdict, use
 
 if TYPE_CHECKING:
     from fe_shaft.model.limit import Limit
@@ -29,8 +29,8 @@ def _judge(limit: Limit, results: Results, pins: Results | None, mixes: Mixes | 
     cases = [results.case_number(name) for name in model.limit_cases(limit.name)]
     bounds = _Bounds(limit)
     values = bounds.values(results, parts, cases)
-    use = bounds.use(values)
-    part, case = (int(k) for k in np.unravel_index(use.argmax(), use.shape))
+    used = bounds.use(values)
+    part, case = (int(k) for k in np.unravel_index(used.argmax(), used.shape))
     alone = None if pins is None else float(bounds.values(pins, parts, cases)[part, case])
     return Verdict(
         limit=limit.name,
@@ -40,8 +40,8 @@ def _judge(limit: Limit, results: Results, pins: Results | None, mixes: Mixes | 
         value=float(values[part, case]),
         least=bounds.least,
         most=bounds.most,
-        use=float(use[part, case]),
-        per_case={results.cases[c]: float(use[:, k].max()) for k, c in enumerate(cases)},
+        use=float(used[part, case]),
+        per_case={results.cases[c]: float(used[:, k].max()) for k, c in enumerate(cases)},
         source=limit.source or "",
         counting=limit.counting,
         band=None if mixes is None else _band(bounds, mixes, parts, cases),
@@ -64,19 +64,14 @@ class _Bounds:
 
     def use(self, values: Array) -> Array:
         """Above 1 where the limit is exceeded."""
-        if self.most is not None and self.least is None:
-            return np.asarray(values / self.most)
-        if self.most is None or self.least is None:
-            with np.errstate(divide="ignore"):
-                return np.asarray((self.least or 0.0) / values)
-        return np.abs(values - (self.most + self.least) / 2) / ((self.most - self.least) / 2)
+        return use(values, self.least, self.most)
 
 
 def _band(bounds: _Bounds, mixes: Mixes, parts: Sequence[str], cases: list[int]) -> Band:
     def governing(results: Results) -> tuple[float, float]:
         values = bounds.values(results, parts, cases)
-        use = bounds.use(values)
-        return float(values.flat[use.argmax()]), float(use.max())
+        used = bounds.use(values)
+        return float(values.flat[used.argmax()]), float(used.max())
 
     each = [governing(mix.results) for mix in mixes.corners]
     worst = max(range(len(each)), key=lambda k: each[k][1])

@@ -9,7 +9,7 @@ from pathlib import Path
 from typing import Any
 
 from fe_shaft.cli.catalogue import COMMANDS
-from fe_shaft.cli.explain_keys import LABEL, group_page, group_words, joined, key_page, key_words
+from fe_shaft.cli.explain_keys import LABEL, group_page, group_words, joined, key_page, key_words, value_page
 from fe_shaft.errors import UsageError, nearest, quote
 from fe_shaft.model.material import BUILT_IN_NAMES, built_in
 from fe_shaft.results.quantity import QUANTITIES
@@ -29,7 +29,9 @@ def page(word: str) -> str:
         Nothing is known about it; with the nearest word that is.
     """
     word = " ".join(word.split())
-    found = list(_pages(word)) or list(_by_message(word)) or list(_by_address(word))
+    if not word:
+        raise UsageError("explain which word? `fe-shaft explain` lists what is known.")
+    found = list(_pages(word)) or list(value_page(word)) or list(_by_message(word)) or list(_by_address(word))
     if not found:
         hint = nearest(word, _known()) or "`fe-shaft explain` lists what is known."
         raise UsageError(f"nothing is known about {quote(word)}. {hint}")

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator, Sequence
+from collections.abc import Iterable, Iterator, Sequence
 
 from fe_shaft.model.groups import GROUPS
 from fe_shaft.model.reference import Entry, entries, units_of
@@ -44,10 +44,19 @@ def group_page(word: str) -> Iterator[list[str]]:
 
 def key_page(word: str) -> Iterator[list[str]]:
     """The pages of a key, one for each meaning; `gears.helix` takes the one of a group."""
+    yield from _keys(entry for entry in entries() if word in (entry.key, f"{entry.group}.{entry.key}"))
+
+
+def value_page(word: str) -> Iterator[list[str]]:
+    """The pages of the keys that may hold a word, such as `bevel`."""
+    yield from _keys(entry for entry in entries() if word in entry.kind.removeprefix("list of: ").split(" | "))
+
+
+def _keys(wanted: Iterable[Entry]) -> Iterator[list[str]]:
+    """One page for each meaning."""
     found: dict[tuple[str, ...], list[Entry]] = {}
-    for entry in entries():
-        if word in (entry.key, f"{entry.group}.{entry.key}"):
-            found.setdefault((entry.description, entry.kind, entry.default), []).append(entry)
+    for entry in wanted:
+        found.setdefault((entry.description, entry.kind, entry.default), []).append(entry)
     for same in found.values():
         yield _key(same)
 

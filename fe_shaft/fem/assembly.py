@@ -20,8 +20,10 @@ from fe_shaft.fem.frames import rigid_link
 Array = NDArray[np.float64]
 Ints = NDArray[np.intp]
 
-#: Below this number of displacements dense LAPACK beats a sparse factorisation (start-up included).
-DENSE_LIMIT = 300
+#: Up to this number of displacements, and of displacements times cases, a dense system is solved faster than a sparse
+#: one is started. Beyond, BLAS takes several threads, which wait for each other where other programs run as well:
+#: 0.6 ms become 8 to 100.
+DENSE_LIMIT, DENSE_NUMBERS = 96, 4000
 
 
 class Springs(NamedTuple):
@@ -101,18 +103,18 @@ class Reduction(NamedTuple):
         return force[self.free] if self.free is not None else np.asarray(self.matrix.T @ force)
 
 
-def is_dense(n_nodes: int) -> bool:
+def is_dense(n_nodes: int, n_cases: int = 1) -> bool:
     """Whether a system is small enough to be carried densely."""
-    return n_nodes * NDOF <= DENSE_LIMIT
+    return n_nodes * NDOF <= DENSE_LIMIT and n_nodes * NDOF * n_cases <= DENSE_NUMBERS
 
 
-def scatter(n_nodes: int, node_a: Ints, block_a: Array, node_b: Ints, block_b: Array) -> Any:
+def scatter(n_nodes: int, node_a: Ints, block_a: Array, node_b: Ints, block_b: Array, n_cases: int = 1) -> Any:
     """Scatter two 6 x 6 blocks a part into one matrix of 6 n_parts rows and 6 n_nodes columns.
 
     Node number n_nodes is the ground; what falls there is dropped.
     """
     n = len(node_a)
-    if is_dense(n_nodes):
+    if is_dense(n_nodes, n_cases):
         full = np.zeros((n, NDOF, n_nodes + 1, NDOF))
         rows = np.arange(n)
         full[rows, :, node_a] = block_a
@@ -164,7 +166,7 @@ def _with_blocks(free: NDArray[np.bool_], mixed: list[tuple[int, Array]]) -> Any
         dofs = np.arange(NDOF) + node * NDOF
         columns = column[node][free[node]]
         matrix[np.ix_(dofs, columns)] = block
-    return matrix.toarray() if is_dense(len(free)) else sparse.csr_array(matrix)
+    return sparse.csr_array(matrix)
 
 
 def _node_block(here: list[Constraint]) -> tuple[Array, Array]:

@@ -192,15 +192,17 @@ def stretch(of_spans: Array, pieces: Pieces) -> Array:
     return of_spans.repeat(pieces.counts, axis=-1)
 
 
-def sums_before(steps: Array, pieces: Pieces) -> Array:
+def sums_before(steps: Array, pieces: Pieces, out: Array | None = None) -> Array:
     """Sums of the steps of the pieces to the left, (..., m), of which only differences within a span mean something.
 
     They start anew in each chain, so that large movements of one shaft do not round off small ones of another.
     """
-    before = np.zeros_like(steps)
+    before = np.empty_like(steps) if out is None else out
     if len(pieces.starts) == steps.shape[-1]:  # every piece is a span of its own
+        before.fill(0.0)
         return before
     ends = (*pieces.chains, steps.shape[-1])
     for first, last in zip((0, *pieces.chains), ends, strict=True):
-        np.cumsum(steps[..., first : last - 1], axis=-1, out=before[..., first + 1 : last])
+        before[..., first] = 0.0
+        np.add.accumulate(steps[..., first : last - 1], axis=-1, out=before[..., first + 1 : last])
     return before

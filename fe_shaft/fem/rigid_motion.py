@@ -18,6 +18,14 @@ SURELY_HELD = 1e-10
 
 _WITHOUT_SPIN = [UX, UY, UZ, RY, RZ]
 _SPIN = np.eye(NDOF)[[RX]]
+_UNIT = np.eye(len(_WITHOUT_SPIN))
+
+
+def _above(matrix: Array, least: float) -> bool:
+    """Whether all eigenvalues of a symmetric 5 x 5 matrix are above a value: the rest has a Cholesky factor."""
+    from scipy.linalg import lapack
+
+    return bool(lapack.dpotrf(matrix - least * _UNIT)[1] == 0)
 
 
 def free_motions(held: Array, length: float) -> Array:
@@ -38,7 +46,7 @@ def free_motions(held: Array, length: float) -> Array:
     """
     if len(held) >= 5 and not held[:, RX].any():
         rows = held[:, _WITHOUT_SPIN] * np.array([1.0, 1.0, 1.0, 1 / length, 1 / length])
-        if np.linalg.eigvalsh(rows.T @ rows)[0] > SURELY_HELD:
+        if _above(rows.T @ rows, SURELY_HELD):
             return _SPIN / length
     weigh = np.array([1.0, 1.0, 1.0, 1 / length, 1 / length, 1 / length])
     rows = held * weigh

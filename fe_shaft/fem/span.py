@@ -278,10 +278,10 @@ class Recovery:
         """Displacements at each piece's left end, (6, n_cases, m)."""
         steps, length = self._steps, self.pieces.length
         left = np.empty_like(steps)
-        left[3:] = self._sum(steps[3:], self._u_node[3:])
+        self._sum(slice(3, 6), left)
         steps[1] += left[5] * length
         steps[2] -= left[4] * length
-        left[:3] = self._sum(steps[:3], self._u_node[:3])
+        self._sum(slice(3), left)
         return left
 
     @cached_property
@@ -289,31 +289,33 @@ class Recovery:
         """Displacements at each piece's right end, (6, n_cases, m)."""
         return self.u_left + self._steps
 
-    def _sum(self, steps: Array, u_node: Array) -> Array:
-        """Running sums from the spans' left nodes: values at the left ends."""
-        left = sums_before(steps, self.pieces)
-        left += stretch(u_node - left.take(self.pieces.starts, axis=-1), self.pieces)
-        return left
+    def _sum(self, own: slice, left: Array) -> None:
+        """Put the running sums of some displacements from the spans' left nodes into `left`."""
+        sums = sums_before(self._steps[own], self.pieces, left[own])
+        sums += stretch(self._u_node[own] - sums.take(self.pieces.starts, axis=-1), self.pieces)
 
     @cached_property
     def _steps(self) -> Array:
         """What each piece adds to the displacements; `u_left` adds what comes from the slope at its left end.
 
-        Both planes go together: shear (V_y, V_z) with moment (M_z, -M_y), so that M' = -V in each.
+        Both planes go together: shear (V_y, V_z) with moment (M_z, -M_y), so that M' = -V in each; the moment is that
+        at the piece's own elastic centre, where it only turns the right end and shear only shifts it.
         """
         give, s = self._give, self._s
         shear = s[1:3]
-        moment = s[:3:-1] * _TURN_SIGNS + shear * self._offset
-        h0 = give.bending * (self.pieces.length - give.centre)
-        across = h0 * moment - (h0 * give.centre - give.own - give.shear) * shear
-        turn = give.bending * (moment - give.centre * shear)
-        axial, torsion = give.axial * s[0], give.torsion * s[3]
+        moment = s[:3:-1] * _TURN_SIGNS + shear * (self._offset - give.centre)
+        steps = np.empty_like(s)
+        across, turn = steps[1:3], steps[:3:-1]
+        np.multiply(give.axial, s[0], out=steps[0])
+        np.multiply(give.torsion, s[3], out=steps[3])
+        np.multiply(give.bending, moment, out=turn)
+        np.multiply(self.pieces.length - give.centre, turn, out=across)
+        across += (give.own + give.shear) * shear
         for load, density in self._densities:
             more = _load_steps(self.pieces.points, self.pieces.length, load, density)
-            axial, across, torsion, turn = axial + more[0], across + more[1], torsion + more[2], turn + more[3]
-        steps = np.empty_like(s)
-        steps[0], steps[1:3], steps[3], steps[5] = axial, across, torsion, turn[0]
-        np.negative(turn[1], out=steps[4])
+            for own, each in zip((steps[0], across, steps[3], turn), more, strict=True):
+                own += each
+        np.negative(steps[4], out=steps[4])
         return steps
 
 

@@ -161,8 +161,16 @@ class Gear(Heavy):
         return self.teeth * self.normal_module.si / math.cos(self.helix_angle)
 
     @property
+    def width_si(self) -> float | None:
+        """How wide it is along the shaft [m]: the face width; of a bevel gear b cos(delta)."""
+        width = super().width_si
+        if width is not None and self.form == "bevel" and self.pitch_cone_angle is not None:
+            return width * math.cos(self.pitch_cone_angle.si)
+        return width
+
+    @property
     def spread_si(self) -> float:
         """Width over which the tooth force is spread [m]; 0 at a point."""
         if self.spread == "facewidth":
-            return self.facewidth.si if self.facewidth else 0.0
+            return self.width_si or 0.0
         return self.spread.si if isinstance(self.spread, Value) else 0.0

@@ -183,7 +183,8 @@ class Count(Kind):
             remedy = f"Write {raw:.0f}." if whole else "Write it without quotes and unit, as in 19."
             raise refuse(f"{shown(raw)} is not a whole number. {remedy}")
         if not self.least <= int(raw) <= self.most:
-            raise refuse(f"{shown(raw)} is not possible here. Write {self.least} to {self.most}.")
+            span = f"{self.least} to {self.most}" if self.least < self.most else f"{self.least}"
+            raise refuse(f"{shown(raw)} is not possible here. Write {span}.")
         return int(raw)
 
     @override

@@ -49,7 +49,7 @@ class Part(Named):
                 f"at is not written. Write {example_of(type(self), 'at')} (middle), or left_at or right_at (a face).",
             )
         elif len(placed) > 1:
-            yield Fault((placed[1],), f"{' and '.join(placed)} place it {len(placed)} times. Keep one.")
+            yield Fault((placed[1],), f"{' and '.join(placed)} place it more than once. Keep one.")
         elif placed[0] != "at" and not self.given & {self.width_key, "catalogue"}:
             key = self.width_key
             remedy = f"Write {example_of(type(self), key)} as well, or at." if key else "Write at."

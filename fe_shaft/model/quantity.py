@@ -10,9 +10,10 @@ from typing_extensions import override
 from fe_shaft.errors import quote
 from fe_shaft.model.kinds import Kind
 from fe_shaft.model.refusal import refuse
-from fe_shaft.units import FACTORS, TRADE_UNITS, UnitError, Value, convert, parse
+from fe_shaft.units import FACTORS, TRADE_UNITS, UnitError, Value, parse, show
 
 Sign = Literal["positive", "not negative", "any"]
+ABSURD = 1e6  # times beyond the usual range: refused
 MOST_REMEMBERED = 20_000  # texts whose value a kind keeps; long shafts repeat few texts
 
 
@@ -59,6 +60,8 @@ class Quantity(Kind):
         except UnitError as error:
             raise refuse(str(error)) from None
         self._check_sign(value)
+        if not loose:
+            self._check_size(value)
         if text:
             if len(self._known) >= MOST_REMEMBERED:
                 self._known.clear()
@@ -72,12 +75,27 @@ class Quantity(Kind):
         if self.sign == "not negative" and lowest < 0.0:
             raise refuse(f"{quote(value.text)} is negative. Write 0 or a positive value.")
 
+    def _check_size(self, value: Value) -> None:
+        """Sizes that no machine has are refused even where no slip of units explains them."""
+        if self.usual is None or value.si == 0.0:
+            return
+        least = self.usual[0] / ABSURD if self.sign == "positive" else 0.0  # what may be 0 may be its rounding
+        if not least <= abs(value.si) <= self.usual[1] * ABSURD:
+            raise refuse(
+                f"{quote(value.text)} is no size of this world; usual: {self._range}. Check it "
+                '(to keep it: range_check = "off" in this table).'
+            )
+
+    @property
+    def _range(self) -> str:
+        low, high = (show(end, self.unit) for end in self.usual or (0.0, 0.0))
+        return f"{low} to {high}"
+
     def unusual(self, value: Value) -> str | None:
         """The doubt about a value outside the usual range, or None."""
         if self.usual is None or value.si == 0.0 or self.usual[0] <= abs(value.si) <= self.usual[1]:
             return None
-        low, high = (f"{convert(end, self.unit):.4g}" for end in self.usual)
-        return f"{quote(value.text)} is unusual; usual: {low} to {high} {self.unit}".rstrip()
+        return f"{quote(value.text)} is unusual; usual: {self._range}"
 
     @override
     def json(self) -> dict[str, Any]:

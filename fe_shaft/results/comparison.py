@@ -92,14 +92,6 @@ class Row:
         nothing = np.abs(self.right) <= self.rounding
         return np.asarray(np.where(nothing, 0.0, 1 - self.left / np.where(nothing, 1.0, self.right)))
 
-    @property
-    def spread(self) -> Array:
-        """How far the right value wanders over the corners, relative to its size."""
-        if self.worst is None or self.low is None or self.high is None:
-            return np.zeros_like(self.right)
-        size = np.maximum(np.abs(self.right), np.finfo(float).tiny)
-        return np.asarray(np.max([np.abs(v - self.right) for v in (self.low, self.high, self.worst)], axis=0) / size)
-
 
 @dataclass(frozen=True)
 class Comparison:

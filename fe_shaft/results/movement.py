@@ -10,8 +10,10 @@ from numpy.typing import NDArray
 
 from fe_shaft.fem.dofs import RX, RY, RZ, UX, UY, UZ
 from fe_shaft.results.quantity import QUANTITIES, in_unit
+from fe_shaft.units import show
 
 Array = NDArray[np.float64]
+MOST_TOLD = 6  # cases whose values a prompt shows
 #: An array over the cases, or one float.
 Number = TypeVar("Number", Array, float)
 
@@ -34,6 +36,11 @@ class Movement(Generic[Number]):
     load: Array
 
     kind = "place"
+
+    def __repr__(self) -> str:
+        """Every quantity in its trade unit."""
+        told = (f"{name} {_told(self.value(name), QUANTITIES[name].unit)}" for name in self.quantities())
+        return f"<{self.name}: {', '.join(told)}>"
 
     def in_case(self, k: int) -> Any:
         """The same in one case: floats instead of arrays."""
@@ -86,7 +93,7 @@ class Movement(Generic[Number]):
     slope_mrad, twist_mrad = map(in_unit, ("slope", "twist"))
 
 
-@dataclass(frozen=True)
+@dataclass(frozen=True, repr=False)
 class GearMovement(Movement[Number]):
     """Of a gear: also against its mate.
 
@@ -122,7 +129,7 @@ class GearMovement(Movement[Number]):
     separation_um, tangential_um = map(in_unit, ("separation", "tangential"))
 
 
-@dataclass(frozen=True)
+@dataclass(frozen=True, repr=False)
 class SupportMovement(Movement[Number]):
     """Of a support: also what it carries and how far it gives.
 
@@ -190,3 +197,11 @@ class SupportMovement(Movement[Number]):
     tilt_mrad, give_um, seat_movement_um = map(in_unit, ("tilt", "give", "seat_movement"))
     force_N, radial_force_N, axial_force_N = map(in_unit, ("force", "radial_force", "axial_force"))
     up_force_N, front_force_N, tilt_moment_Nm = map(in_unit, ("up_force", "front_force", "tilt_moment"))
+
+
+def _told(values: Any, unit: str) -> str:
+    """Such as "42.9 um"; of many cases the first ones: "[42.9, 43.4, ...] um"."""
+    if np.ndim(values) == 0:
+        return show(float(values), unit)
+    first = [show(float(value), unit).removesuffix(f" {unit}") for value in values[:MOST_TOLD]]
+    return f"[{', '.join(first + ['...'] * (len(values) > MOST_TOLD))}] {unit}"

@@ -64,4 +64,4 @@ class Proof:
             f"{name} {error:.0e}" if error else f"{name} 0"
             for name, error in (("forces", forces), ("moments", moments), ("energy", energy))
         )
-        return f"{told} | {digits}"
+        return f"{told} | {digits}" if np.isfinite(lost) else told

@@ -9,7 +9,7 @@ from typing import TYPE_CHECKING, Any
 import numpy as np
 from numpy.typing import NDArray
 
-from fe_shaft.errors import UsageError, nearest
+from fe_shaft.errors import UsageError, nearest, quote
 from fe_shaft.results.line import Line
 from fe_shaft.results.parts import Parts
 from fe_shaft.results.proof import Proof
@@ -122,7 +122,9 @@ class Results:
 
     def _look_up(self, address: str) -> tuple[Quantity, Array]:
         name, _, key = address.rpartition(".")
-        part = self[name] if name else self[key]
+        if not name:
+            raise UsageError(f'{quote(address)} is not a part and its quantity. Write such as "wheel.deflection".')
+        part = self[name]
         if isinstance(part, ShaftResults):
             known = [q for q in ("deflection", "slope") if q in QUANTITIES]
             if key in known:
@@ -132,6 +134,10 @@ class Results:
             if key in known:
                 return QUANTITIES[key], np.asarray(part.value(key))
         raise UsageError(f'{name} has no quantity "{key}". {nearest(key, known)}')
+
+    def __repr__(self) -> str:
+        named = ", ".join([*self.cases[:4], *["..."] * (len(self.cases) > 4)])
+        return f"Results({quote(self.model.title)}, cases: {named})"
 
     def __str__(self) -> str:
         from fe_shaft.results.text import results_text
@@ -173,6 +179,16 @@ class CaseResults:
     def name(self) -> str:
         """Of the case."""
         return self.results.cases[self.k]
+
+    def __str__(self) -> str:
+        from fe_shaft.results.text import results_text
+
+        return results_text(self.results, [self.name])
+
+    def _repr_html_(self) -> str:
+        from fe_shaft.results.html import preformatted
+
+        return preformatted(str(self))
 
     def __getitem__(self, name: str) -> Any:
         part = self.results[name]

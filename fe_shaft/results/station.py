@@ -3,19 +3,23 @@
 from __future__ import annotations
 
 from collections.abc import Callable
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 
 import numpy as np
 from numpy.typing import NDArray
 
+from fe_shaft.errors import UsageError
 from fe_shaft.results.extremes import largest_along
 from fe_shaft.results.line import Line
 from fe_shaft.results.movement import Movement, Number
+from fe_shaft.units import show
 
 Array = NDArray[np.float64]
 
+ROUNDING = 1e-9  # of the shaft's length: what sums of lengths may miss an end by
 
-@dataclass(frozen=True)
+
+@dataclass(frozen=True, repr=False)
 class Station(Movement[Number]):
     """Movement and section forces at a place.
 
@@ -62,12 +66,17 @@ class ShaftResults:
     """
 
     name: str
-    line: Line
-    find: Callable[[str], float]
+    line: Line = field(repr=False)
+    find: Callable[[str], float] = field(repr=False)
 
     def at(self, place: str) -> Station[Array]:
         """Movement and section forces at a place, such as "62 mm" or "wheel + 12 mm"."""
-        x = self.find(place)
+        x, length = self.find(place), self.line.length
+        if not -ROUNDING * length <= x <= (1 + ROUNDING) * length:
+            end = show(length, "mm", 6)
+            raise UsageError(
+                f'"{place}" is {show(x, "mm", 6)}, off the shaft: {self.name} is {end} long. Write 0 mm to {end}.'
+            )
         u, force = self.line.at(x)
         return Station(place, u[:, 0], np.zeros_like(u[:, 0]), x, force[:, 0])
 

@@ -7,6 +7,7 @@ from typing import TYPE_CHECKING
 
 from fe_shaft.results.words.case import by_hand, case_lines
 from fe_shaft.results.words.comparison import comparison_lines
+from fe_shaft.results.words.doubts import doubts
 from fe_shaft.results.words.envelope import envelope
 from fe_shaft.results.words.layout import labelled
 from fe_shaft.results.words.page import Page
@@ -39,7 +40,7 @@ def results_text(results: Results, cases: Sequence[str] | None = None, *, source
     """
     page = Page.of(results)
     chosen = [results.case_number(name) for name in _wanted(results, cases)]
-    blocks = [answer(page), _verdicts(page, listed=sources)]
+    blocks = [answer(page), doubts(page), _verdicts(page, listed=sources)]
     if len(results.cases) > 1:
         blocks.append(envelope(page))
     blocks += [case_lines(page, k) for k in chosen]
@@ -63,7 +64,8 @@ def comparison_text(comparison: Comparison, case: str | None = None) -> str:
     """
     results = comparison.right
     k = results.case_number(case if case is not None else governing_case(results))
-    blocks = [*comparison_lines(comparison, k), other_cases(results, [k])]
+    first, *others = comparison_lines(comparison, k)
+    blocks = [first, doubts(Page.of(results)), *others, other_cases(results, [k])]
     return "\n".join("\n".join(lines) + "\n" for lines in blocks if lines).rstrip()
 
 

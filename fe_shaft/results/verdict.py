@@ -2,13 +2,37 @@
 
 from __future__ import annotations
 
-import math
 from dataclasses import dataclass
 from typing import Literal
+
+import numpy as np
+from numpy.typing import ArrayLike, NDArray
 
 from fe_shaft.results.quantity import FACTOR, QUANTITIES
 
 Word = Literal["FAIL", "pass", "unsure"]
+
+
+def use(values: ArrayLike, least: float | None, most: float | None) -> NDArray[np.float64]:
+    """How much of what is allowed is used, (...); above 1 a limit is exceeded.
+
+    Parameters
+    ----------
+    values : (...) SI
+    least, most : bounds, SI; with one of them the values' sizes count, with both the sign counts too
+
+    Returns
+    -------
+    size over `most`; `least` over size, infinite where nothing is there; with both bounds, distance from their middle
+    over half their distance
+    """
+    values = np.asarray(values, dtype=float)
+    if least is None and most is not None:
+        return np.asarray(np.abs(values) / most)
+    if most is None or least is None:
+        with np.errstate(divide="ignore"):
+            return np.asarray((least or 0.0) / np.abs(values))
+    return np.asarray(np.abs(values - (most + least) / 2) / ((most - least) / 2))
 
 
 @dataclass(frozen=True)
@@ -45,8 +69,7 @@ class Verdict:
     part, quantity, case : where it governs
     value : SI; its size where only one bound is given
     least, most : bounds, SI, None where not given
-    use : size over `most`; `least` over size; with both bounds, distance from their middle over half their distance.
-        Above 1 it fails.
+    use : see `use`; above 1 it fails
     per_case : use in each case the limit speaks of
     band : over the estimates, None where nothing is estimated
     shaft_alone : the value on rigid pins, None where pins cannot hold the shaft
@@ -75,11 +98,7 @@ class Verdict:
 
     def use_of(self, value: float) -> float:
         """Use of another value of the same quantity [SI]."""
-        if self.most is not None and self.least is not None:
-            return abs(value - (self.most + self.least) / 2) / ((self.most - self.least) / 2)
-        if self.most is not None:
-            return abs(value) / self.most
-        return math.inf if value == 0 else (self.least or 0.0) / abs(value)
+        return float(use(value, self.least, self.most))
 
     @property
     def unit(self) -> str:

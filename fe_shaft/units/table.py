@@ -47,6 +47,8 @@ def _combine(left: list[Unit], sign: str, right: list[Unit]) -> list[Unit]:
 _POUND = 0.45359237
 _LBF = 4.4482216152605  # _POUND * STANDARD_GRAVITY, all digits
 _INCH2 = 0.00064516  # 0.0254^2, all digits
+_INCH3 = 0.000016387064  # 0.0254^3, all digits
+_FOOT3 = 0.028316846592  # 0.3048^3, all digits
 _METRIC_HORSEPOWER = 75 * STANDARD_GRAVITY  # 75 kgf m/s
 _IMPERIAL_HORSEPOWER = (550 * _LBF * 3048, 1e4)  # 550 ft lbf/s
 _LENGTH = _list(
@@ -76,7 +78,7 @@ UNITS: dict[str, list[Unit]] = {
     "pressure": _list(
         ("Pa", 1), ("kPa", 1e3), ("MPa", 1e6), ("GPa", 1e9), ("psi", _LBF, _INCH2), ("ksi", 1e3 * _LBF, _INCH2)
     ),
-    "density": _list(("kg/m^3", 1), ("g/cm^3", 1e3)),
+    "density": _list(("kg/m^3", 1), ("g/cm^3", 1e3), ("lb/in^3", _POUND, _INCH3), ("lb/ft^3", _POUND, _FOOT3)),
     "expansion": _list(("1/K", 1)),
     "acceleration": _list(("m/s^2", 1)),
     "temperature": [Unit("K", 1), Unit("degC", 1, 1, 273.15), Unit("degF", 5, 9, 459.67)],

@@ -6,6 +6,7 @@ from dataclasses import dataclass, field
 
 import numpy as np
 
+from fe_shaft.results.shown import Shown as Units
 from fe_shaft.units import show
 from fe_shaft.views.camera import Eye
 from fe_shaft.views.drawing import Arrow, Drawing, Floats
@@ -18,6 +19,7 @@ SHORTEST = 0.05  # so that a small force is still seen; its number is written be
 NOTHING = 1e-9  # of the largest force
 SIDEWAYS = 0.7  # cosine to the line of sight, below which a bent arrow is a ribbon
 ROUND = 0.7  # cosine to the shaft, above which it goes round it
+TRADE = Units()
 
 
 @dataclass(frozen=True)
@@ -47,7 +49,15 @@ class Arrows:
     paths: list[Floats] = field(default_factory=list)
 
 
-def draw_arrows(drawing: Drawing, case: int, factor: float, eye: Eye, largest: float, width: float) -> Arrows:
+def draw_arrows(
+    drawing: Drawing,
+    case: int,
+    factor: float,
+    eye: Eye,
+    largest: float,
+    width: float,
+    units: Units = TRADE,
+) -> Arrows:
     """Arrows of one case: loads filled, supports hollow, torques bent.
 
     Parameters
@@ -64,12 +74,14 @@ def draw_arrows(drawing: Drawing, case: int, factor: float, eye: Eye, largest: f
         Force that is drawn longest.
     width : float [m]
         Of an arrow's shaft.
+    units : Units
+        Of the numbers at their tails.
     """
     drawn = Arrows()
     for each in drawing.arrows:
         point = each.point + factor * each.movement(case)
-        _add_force(drawn, each, each.force[case], point, drawing.length, eye, largest, width)
-        _add_torque(drawn, each, each.couple[case], point, drawing.length, eye, width)
+        _add_force(drawn, each, each.force[case], point, drawing.length, eye, largest, width, units)
+        _add_torque(drawn, each, each.couple[case], point, drawing.length, eye, width, units)
     return drawn
 
 
@@ -79,13 +91,21 @@ def reach(force: Floats, length: float, largest: float) -> float:
     return length * max(LONGEST * size / largest, SHORTEST) if size > NOTHING * largest else 0.0
 
 
-def force_text(size: float) -> str:
-    """A force with its unit: ``40.2 N``, ``4.98 kN``."""
-    return show(size, "kN") if size >= 1000.0 else show(size, "N")
+def force_text(size: float, unit: str = "N") -> str:
+    """A force with its unit: ``40.2 N``, ``4.98 kN``; in other units as they are."""
+    return show(size, "kN" if unit == "N" and size >= 1000.0 else unit)
 
 
 def _add_force(
-    drawn: Arrows, arrow: Arrow, force: Floats, point: Floats, length: float, eye: Eye, largest: float, width: float
+    drawn: Arrows,
+    arrow: Arrow,
+    force: Floats,
+    point: Floats,
+    length: float,
+    eye: Eye,
+    largest: float,
+    width: float,
+    units: Units,
 ) -> None:
     long = reach(force, length, largest)
     if long == 0.0:
@@ -93,7 +113,7 @@ def _add_force(
     size = float(np.linalg.norm(force))
     tip = point - arrow.clear * force / size
     tail = tip - long * force / size
-    drawn.tails.append(Tail(tail, tail - tip, force_text(size)))
+    drawn.tails.append(Tail(tail, tail - tip, force_text(size, units.force)))
     drawn.paths.append(np.linspace(tail, tip, 9))
     face = flat_arrow(tail, tip, eye.towards, width, filled=True)
     drawn.shapes["paper" if arrow.support else "filled"].append(face)
@@ -102,7 +122,7 @@ def _add_force(
 
 
 def _add_torque(
-    drawn: Arrows, arrow: Arrow, couple: Floats, point: Floats, length: float, eye: Eye, width: float
+    drawn: Arrows, arrow: Arrow, couple: Floats, point: Floats, length: float, eye: Eye, width: float, units: Units
 ) -> None:
     size = float(np.linalg.norm(couple))
     if size == 0.0:
@@ -111,6 +131,6 @@ def _add_torque(
     ribbon = abs(float(couple @ eye.towards)) < SIDEWAYS * size
     shape = bent_arrow(point, couple, radius, width, eye.towards, ribbon=ribbon)
     highest = shape.points[np.argmax(shape.points @ eye.up)]
-    drawn.tails.append(Tail(highest, highest - point, show(size, "N m")))
+    drawn.tails.append(Tail(highest, highest - point, show(size, units.moment)))
     round_the_shaft = ribbon and abs(float(couple @ arrow.axis)) > ROUND * size
     drawn.shapes["bent" if round_the_shaft else "filled"].append(shape)

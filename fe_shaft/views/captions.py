@@ -11,8 +11,8 @@ from typing import TYPE_CHECKING, Any
 
 import numpy as np
 
-from fe_shaft.results.quantity import QUANTITIES
-from fe_shaft.units import show
+from fe_shaft.results.shown import Shown as Units
+from fe_shaft.units import show, unit_factor
 from fe_shaft.views.arrows import Tail
 from fe_shaft.views.camera import Eye
 from fe_shaft.views.drawing import Drawing, Floats
@@ -57,6 +57,7 @@ class Captions:
     def __init__(self, overlay: Overlay, results: Results, drawing: Drawing, heading: str) -> None:
         self.overlay = overlay
         self.results = results
+        self.units = Units.of(results.model)
         self.drawing = drawing
         self.heading = heading
 
@@ -128,11 +129,12 @@ class Captions:
     def write_scale(self, shown: Shown, eye: Eye, size: tuple[float, float]) -> Box:
         """A line whose length is a round movement at this exaggeration. Returns the box taken."""
         font, per_metre = self.overlay.font, eye.pixels_per_metre(size) * shown.factor
-        movement = longest_125(SCALE_LINE * size[0] / per_metre)
+        unit = unit_factor("length", self.units.length)
+        movement = longest_125(SCALE_LINE * size[0] / per_metre / unit) * unit
         x, y, long = 1.5 * font, 1.6 * font, movement * per_metre
         ends = [[(end, y - 0.4 * font), (end, y + 0.4 * font)] for end in (x, x + long)]
         self.overlay.lines("scale", [[(x, y), (x + long, y)], *ends], width=2.0, colour=BLACK)
-        text = f"{show(movement, 'um')} at this exaggeration"
+        text = f"{show(movement, self.units.length)} at this exaggeration"
         self.overlay.write("scale", text, (x + long + font, y - 0.4 * font))
         return (0.0, 0.0, x + long + 2 * font + self.overlay.size(text)[0], 2.6 * font)
 
@@ -144,7 +146,8 @@ class Captions:
         self.overlay.bands("bar", (left, bottom, right, top), _colours(BAR_COLOURS))
         edge = size[0] - 0.6 * font
         self.overlay.write("bar name", colouring.name, (edge, top + 2.2 * font), align="right")
-        self.overlay.write("bar unit", f"[{colouring.unit}], true", (edge, top + 0.8 * font), align="right")
+        unit = f"[{colouring.unit_in(self.units)}], true"
+        self.overlay.write("bar unit", unit, (edge, top + 0.8 * font), align="right")
         self.overlay.remove("bar tick")
         ticks = []
         for number, value in enumerate(round_values(low, high)):
@@ -152,7 +155,7 @@ class Captions:
             ticks.append([(right, y), (right + 0.35 * font, y)])
             self.overlay.write(f"bar tick {number}", f"{value:g}", (right + 0.55 * font, y - 0.4 * font))
         self.overlay.lines("bar ticks", ticks, colour=BLACK)
-        widest = max(self.overlay.size(text)[0] for text in (colouring.name, f"[{colouring.unit}], true"))
+        widest = max(self.overlay.size(text)[0] for text in (colouring.name, unit))
         return (min(left, edge - widest) - 0.5 * font, bottom - font, size[0], top + 4 * font)
 
 
@@ -166,36 +169,37 @@ def true_movement(results: Results, drawing: Drawing, case: int) -> str:
     """The largest movement, as the results have it: ``39.7 um at pinion``; of a place without a name if it is clearly
     larger there.
     """
-    best, text = 0.0, "0 um"
+    units = Units.of(results.model)
+    best, text = 0.0, f"0 {units.length}"
     for mark in drawing.marks:
         part = results[mark.name].in_case(case)
         for name, word in (("deflection", ""), ("axial", " axial")):
             value = abs(part.value(name))
             if value > best:
-                best, text = value, f"{show(value, 'um')}{word} at {shorten(mark.called, LONGEST_NAME)}"
+                best, text = value, f"{show(value, units.length)}{word} at {shorten(mark.called, LONGEST_NAME)}"
     for name, line in results.lines.items():
         far = int(np.argmax(line.deflection[case]))
         value = float(line.deflection[case, far])
         if value > CLEARLY * best:
-            best, text = value, f"{show(value, 'um')} at {_station(name, line, far)}"
+            best, text = value, f"{show(value, units.length)} at {_station(name, line, far, units.along)}"
     return text
 
 
-def _station(shaft: str, line: Line, number: int) -> str:
+def _station(shaft: str, line: Line, number: int, unit: str) -> str:
     """A station in words: ``layshaft.right``, ``125 mm of layshaft``."""
     name = shorten(shaft, LONGEST_NAME)
     end = {0: f"{name}.left", len(line.x) - 1: f"{name}.right"}
-    return end.get(number) or f"{show(float(line.x[number]), 'mm')} of {name}"
+    return end.get(number) or f"{show(float(line.x[number]), unit)} of {name}"
 
 
 def part_labels(results: Results, drawing: Drawing, shown: Shown) -> list[tuple[Floats, str]]:
     """Where each part is drawn (3,) and what its label says, largest values first."""
     name = COLOURINGS[shown.quantity].part
-    rows = []
+    unit, rows = Units.of(results.model).unit(name), []
     for mark in drawing.marks:
         value = results[mark.name].in_case(shown.case).value(name)
         point = mark.point + shown.factor * mark.movement(shown.case)
-        text = f"{shorten(mark.called, LONGEST_NAME)} {show(value, QUANTITIES[name].unit)}"
+        text = f"{shorten(mark.called, LONGEST_NAME)} {show(value, unit)}"
         rows.append((abs(value), point, text))
     return [(point, text) for _, point, text in sorted(rows, key=lambda row: -row[0])]
 

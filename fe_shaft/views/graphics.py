@@ -8,6 +8,8 @@ from typing import Any
 
 from fe_shaft.errors import UsageError
 
+ROOM = 0.93  # of the screen, for a window without its frame
+
 
 def new_plotter(size: tuple[int, int], off_screen: bool, *, halves: int, strip: float) -> Any:
     """Plotter with one or two halves beside each other and, above the lower edge, a strip for the slider."""
@@ -26,6 +28,18 @@ def new_plotter(size: tuple[int, int], off_screen: bool, *, halves: int, strip: 
         else:  # one sample: the slider answers more than twice as fast where there is no graphics card
             plotter.enable_anti_aliasing("msaa", multi_samples=1, all_renderers=True)
     return plotter
+
+
+def on_screen(size: tuple[int, int]) -> tuple[int, int]:
+    """A window's size, made smaller in proportion where the screen is smaller; its frame needs some room as well."""
+    with quiet():
+        import vtkmodules.vtkRenderingOpenGL2
+        from vtkmodules.vtkRenderingCore import vtkRenderWindow
+
+        assert vtkmodules.vtkRenderingOpenGL2  # brings the window of this machine
+        screen = vtkRenderWindow().GetScreenSize()
+    share = min(1.0, *(ROOM * most / side for most, side in zip(screen, size, strict=True)))
+    return (round(share * size[0]), round(share * size[1])) if share > 0.0 else size
 
 
 def _refuse_no_graphics(plotter: Any) -> None:

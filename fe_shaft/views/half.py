@@ -8,6 +8,7 @@ from typing import TYPE_CHECKING, Any
 
 import numpy as np
 
+from fe_shaft.results.shown import Shown as Units
 from fe_shaft.views import meshes, shapes
 from fe_shaft.views.arrows import Arrows, draw_arrows
 from fe_shaft.views.camera import Eye
@@ -49,6 +50,7 @@ class Half:
 
     def __init__(self, plotter: Any, results: Results, heading: str, font: int, *, pen: float = 1.0) -> None:
         self.results = results
+        self.units = Units.of(results.model)
         self.renderer = plotter.renderer
         self.drawing = Draughtsman(results).draw()
         self.overlay = Overlay(self.renderer, font)
@@ -105,8 +107,8 @@ class Half:
 
     def values(self, quantity: str) -> list[Floats]:
         """True values of a quantity on the rings of every shaft, in its unit."""
-        case = self.shown.case
-        return [COLOURINGS[quantity].values(skin.u[case], skin.force[case]) for skin in self.drawing.skins]
+        case, colouring = self.shown.case, COLOURINGS[quantity]
+        return [colouring.values(skin.u[case], skin.force[case], self.units) for skin in self.drawing.skins]
 
     def colour_by(self, quantity: str, limits: tuple[float, float]) -> None:
         """Colour the shafts by a quantity, over a range that both halves share."""
@@ -174,7 +176,7 @@ class Half:
 
     def _arrows(self, eye: Eye, largest: float) -> Arrows:
         width = ARROW_WIDTH * self.overlay.font / eye.pixels_per_metre(self.size())
-        return draw_arrows(self.drawing, self.shown.case, self.shown.factor, eye, largest, width)
+        return draw_arrows(self.drawing, self.shown.case, self.shown.factor, eye, largest, width, self.units)
 
     def _set(self, style: str, drawn: Sequence[Shape]) -> None:
         actor, shape = self._loose[style], shapes.merge(drawn)

@@ -8,6 +8,7 @@ from math import ceil, floor, log10
 import numpy as np
 from numpy.typing import NDArray
 
+from fe_shaft.results.shown import Shown as Units
 from fe_shaft.units import unit_factor
 
 Floats = NDArray[np.float64]
@@ -22,7 +23,7 @@ class Colouring:
 
     Parameters
     ----------
-    name, unit, dimension : str, the first two as shown beside the colours
+    name, unit, dimension : str, the first two as shown beside the colours, unless the model asks for other units
     of_movement : bool
         Whether it is taken from ux uy uz rx ry rz; else from N Vy Vz Mx My Mz.
     components : component of those six, or the two whose resultant is meant
@@ -36,12 +37,17 @@ class Colouring:
     components: tuple[int, ...]
     part: str = "deflection"
 
-    def values(self, u: Floats, force: Floats) -> Floats:
-        """Values in the unit shown, (...), from (..., 6) movements [m, rad] and section forces [N, N m]."""
+    def unit_in(self, units: Units) -> str:
+        """Unit of the values in a model's units."""
+        unit: str = getattr(units, self.dimension)
+        return unit
+
+    def values(self, u: Floats, force: Floats, units: Units | None = None) -> Floats:
+        """Values in a model's units, (...), from (..., 6) movements [m, rad] and section forces [N, N m]."""
         six = u if self.of_movement else force
         taken = six[..., list(self.components)]
         si = np.hypot(taken[..., 0], taken[..., 1]) if len(self.components) == 2 else taken[..., 0]
-        return np.asarray(si / unit_factor(self.dimension, self.unit))
+        return np.asarray(si / unit_factor(self.dimension, self.unit if units is None else self.unit_in(units)))
 
 
 COLOURINGS = {

@@ -14,7 +14,7 @@ import numpy as np
 from fe_shaft.errors import FileError, UsageError
 from fe_shaft.files import write_whole
 from fe_shaft.views.captions import LINE_HEIGHT, called_cases, part_labels
-from fe_shaft.views.graphics import quiet
+from fe_shaft.views.graphics import on_screen, quiet
 from fe_shaft.views.halves import halves
 from fe_shaft.views.labels import shorten
 from fe_shaft.views.overlay import Overlay
@@ -28,6 +28,7 @@ if TYPE_CHECKING:
 SIZE = (1600, 900)
 STRIP = 84.0  # pixels for the slider
 NEAR = 45.0  # pixels from a part at which the mouse shows its label
+INSTEAD = "Write a picture instead: --picture FILE.png, or fs.picture(results, FILE) in a script."
 WHITE = np.full((1, 3), 255, dtype=np.uint8)
 KEYS = (
     ("1-9", "case"),
@@ -97,8 +98,9 @@ class Window:
         size: tuple[int, int] = SIZE,
     ) -> None:
         if sys.platform.startswith("linux") and not os.environ.get("DISPLAY"):
-            raise UsageError("there is no display for a window here. Write a picture instead: --picture FILE.png.")
+            raise UsageError(f"there is no display for a window here. {INSTEAD}")
         self.results = results
+        size = on_screen(size)
         self.scene = Scene(results, pins, case=case, quantity=quantity, size=size, off_screen=False, strip=STRIP)
         self.plotter = self.scene.plotter
         self._refuse_no_window()
@@ -154,10 +156,7 @@ class Window:
         """On a display that cannot be opened the library draws unseen instead, and would wait for ever."""
         if sys.platform.startswith("linux") and "XOpenGL" not in type(self.plotter.render_window).__name__:
             self.scene.close()
-            raise UsageError(
-                f"the display {os.environ['DISPLAY']} cannot be opened for a window. "
-                "Write a picture instead: --picture FILE.png."
-            )
+            raise UsageError(f"the display {os.environ['DISPLAY']} cannot be opened for a window. {INSTEAD}")
 
     @property
     def _actions(self) -> dict[str, Callable[[], None]]:

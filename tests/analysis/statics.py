@@ -62,13 +62,15 @@ def torque_size(spec: ShaftSpec) -> float:
 
 
 def torsional_flexibility(spec: ShaftSpec) -> float:
-    """Twist of the whole shaft under a torque of 1 N m, every segment as thin as its thinner end [rad/(N m)]."""
+    """Twist of the whole shaft under a torque of 1 N m, every segment as soft as at its softer end [rad/(N m)]."""
     shear_modulus = spec.youngs_modulus / (2 * (1 + spec.poisson_ratio))
-    polar = [
-        np.pi / 32 * (min(s.diameter, s.end_diameter or s.diameter) ** 4 - max(s.bore, s.end_bore or 0.0) ** 4)
-        for s in spec.segments
-    ]
-    return float(sum(s.length / (shear_modulus * p) for s, p in zip(spec.segments, polar, strict=True)))
+    total = 0.0
+    for s in spec.segments:
+        ends = [s.diameter**4 - s.bore**4]
+        outer, bore = (s.end_diameter or s.diameter), (s.bore if s.end_bore is None else s.end_bore)
+        ends.append(outer**4 - bore**4)
+        total += s.length / (shear_modulus * np.pi / 32 * min(ends))
+    return total
 
 
 def about_left_end(wrench: Array, x: Array | float) -> Array:

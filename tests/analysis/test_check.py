@@ -398,6 +398,9 @@ def test_cases_shown_in_full():
 def test_units_of_the_outputs():
     text = str(fs.check(layshaft(units={"force": "lbf", "length": "in"})))
     assert "341 lbf up" in text  # 1516 N / 4.4482216 N
+    assert "5.5 kW at 393.7 rpm is 1181 lbf in" in text  # 133.4 N m / (4.4482216 N 0.0254 m)
+    assert "Torque in = out: 1181 lbf in" in text
+    assert not [line for line in text.splitlines() if " N m" in line and "N m/mrad" not in line]
     assert "7.52 in long" in text
 
 

@@ -18,7 +18,7 @@ import pytest
 import fe_shaft as fs
 from tests.analysis.moves import MIRROR, SWAP, Move, roll, round_springs
 from tests.analysis.statics import common_stations, scales, station, wrench_of
-from tests.models import IN_LBF, M_KN, MM_N, to_cases, to_material, to_model, to_parts
+from tests.models import IN_LBF, M_KN, MM_N, layshaft, to_cases, to_material, to_model, to_parts
 from tests.oracle.shaft_spec import CaseSpec, ForceSpec, ShaftSpec
 from tests.random_shafts import HARD, random_shaft
 
@@ -124,6 +124,17 @@ def test_several_shafts_in_one_model_are_each_as_alone():
         for name, spec in zip(names, specs, strict=True):
             alone = replace(spec, cases=spec.cases[:1])
             assert_same(alone, solved(alone), together.lines[name])
+
+
+def test_idle_parts_change_nothing():
+    """Eighty places more than the shaft needs: other spans, and the sparse way instead of the dense one."""
+    marks = [fs.Force(f"mark_{k}", at=f"{1 + 2.36 * k!r} mm", up="0 N", range_check="off") for k in range(80)]
+    one, other = fs.solve(layshaft()), fs.solve(layshaft((), *marks))
+    for name in one.parts:
+        for values, seen in ((one[name].u, other[name].u), (one[name].load, other[name].load)):
+            assert np.abs(values - seen).max() <= 1e-12 * np.abs(values).max(initial=0.0), name
+    for name in ("lay_left", "lay_right"):
+        np.testing.assert_allclose(other[name].wrench, one[name].wrench, rtol=0, atol=1e-12 * 7e3)
 
 
 # ---- loads

@@ -159,6 +159,30 @@ def test_the_bore_leans_about_the_middle_of_the_ring_not_about_the_load_centre()
     assert results["shaft"].at("50 mm").u[1] == pytest.approx(5e-6, rel=1e-9)
 
 
+@pytest.mark.parametrize("words", [{}, {"load_centre": "10 mm"}])
+def test_pins_in_one_place_with_bores_apart_are_refused(words):
+    """Nothing gives way, so no shaft fits both; it must not come out as a compromise."""
+    one = fs.Pin("one", at="180 mm", holds=["radial", "tilt"])
+    two = fs.Pin("two", at="180 mm", holds=["radial"], offset="10 um", offset_angle="12 o'clock", **words)
+    end = fs.Pin("end", at="20 mm", holds=["radial", "axial"])
+    with pytest.raises(fs.LoadError) as refused:
+        fs.solve(fs.Model("", [bar(), end, one, two]))
+    assert str(refused.value).splitlines() == [
+        "shaft does not fit one and two: they hold it rigidly in one place, but their bores lie apart.",
+        "  Give them the same offset and bore_tilt, or let one of them be a bearing that gives way.",
+    ]
+
+
+def test_pins_in_one_place_with_the_same_bore_share_the_load():
+    same = {"at": "180 mm", "holds": ["radial"], "offset": "10 um", "offset_angle": "12 o'clock"}
+    end = fs.Pin("end", at="20 mm", holds=["radial", "axial"])
+    load = fs.Force("load", at="100 mm", up="1 kN")
+    results = fs.solve(fs.Model("", [bar(), end, fs.Pin("one", **same), fs.Pin("two", **same), load])).case()
+    np.testing.assert_allclose(results["one"].wrench, [0, -250, 0, 0, 0, 0], atol=1e-9)
+    np.testing.assert_allclose(results["two"].wrench, results["one"].wrench, atol=1e-9)
+    assert results["one"].up_um == pytest.approx(10, rel=1e-12)
+
+
 @pytest.mark.parametrize("kind", ["pin", "bearing"])
 def test_a_load_centre_lies_to_the_right_of_the_ring(kind):
     """Reactions are those of a beam on its load centres (lever rule), and act there."""

@@ -6,6 +6,7 @@ import pytest
 
 from fe_shaft.cli.catalogue import COMMANDS
 from fe_shaft.cli.explain import _glossary, page
+from fe_shaft.errors import UsageError
 from fe_shaft.model.groups import GROUPS
 from fe_shaft.model.material import BUILT_IN_NAMES
 from fe_shaft.model.reference import entries
@@ -108,3 +109,16 @@ def test_index_lists_everything(run):
 
 def test_several_words_need_no_quotes(run):
     assert run("explain", "exit", "codes").out == run("explain", "exit codes").out
+
+
+@pytest.mark.parametrize(
+    ("word", "key"), [("bevel", "form"), ("clockwise from left", "turns"), ("cylindrical", "form")]
+)
+def test_a_value_leads_to_the_keys_that_may_hold_it(word, key):
+    assert f"{key}   key of" in page(word)
+
+
+@pytest.mark.parametrize("word", ["", "  "])
+def test_no_word_is_refused(word):
+    with pytest.raises(UsageError, match="explain which word"):
+        page(word)

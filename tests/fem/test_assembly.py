@@ -25,9 +25,11 @@ def mask(*dofs):
     return np.isin(np.arange(6), dofs)
 
 
-def test_dense_up_to_fifty_nodes():
-    assert is_dense(50)
-    assert not is_dense(51)
+def test_dense_while_blas_stays_on_one_thread():
+    assert is_dense(16)
+    assert not is_dense(17)
+    assert is_dense(7, 95)
+    assert not is_dense(7, 96)
 
 
 def test_scatter_puts_each_block_at_its_nodes_and_drops_the_ground(way):

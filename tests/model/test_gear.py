@@ -129,3 +129,13 @@ def test_gears_that_cannot_be(words: dict[str, object], place: str, sentence: st
 )
 def test_bevel_gears_that_cannot_be(words: dict[str, object], place: str, sentence: str) -> None:
     assert only(gear, BEVEL, **words) == (place, sentence)
+
+
+def test_a_bevel_gear_is_as_wide_along_the_shaft_as_its_cone_lets_it() -> None:
+    """b cos(delta): plane geometry."""
+    bevel = fs.Gear(
+        "g", at="50 mm", form="bevel", teeth=20, normal_module="3 mm", facewidth="20 mm", pitch_cone_angle="60 deg",
+        apex="left", mate="12 o'clock",
+    )  # fmt: skip
+    assert bevel.spread_si == pytest.approx(0.010)
+    assert bevel.width_si == pytest.approx(0.010)

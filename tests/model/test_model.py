@@ -80,7 +80,7 @@ def test_nothing_can_be_changed_afterwards() -> None:
         ),
         ({"gravity": [0, 0, 0]}, "gravity", '0 has no unit. Write "0 m/s^2".'),
         ({"title": 3}, "title", '3 is a number, not text. Write it in quotes: "...".'),
-        ({"format": 2}, "format", "2 is not possible here. Write 1 to 1."),
+        ({"format": 2}, "format", "2 is not possible here. Write 1."),
         (
             {"colour": "red"},
             "colour",

@@ -85,13 +85,13 @@ def test_notes_read_as_one_line() -> None:
             [fs.Force("f", at="stub", up="30 MN")],
             {},
             "f.up",
-            '"30 MN" is unusual; usual: 0.01 to 2e+07 N',
+            '"30 MN" is unusual; usual: 0.01 N to 2e7 N',
         ),
         (
             [bearing("b", at="seat", stiffness={"radial": "0.4 N/um"})],
             {},
             "b.stiffness.radial",
-            '"0.4 N/um" is unusual; usual: 0.5 to 2e+04 N/um',
+            '"0.4 N/um" is unusual; usual: 0.5 N/um to 20000 N/um',
         ),
     ],
 )
@@ -127,7 +127,7 @@ def test_matrices_tell_what_is_not_used() -> None:
 def test_unusual_segments_are_counted() -> None:
     rows = [*segments(), *(fs.Segment(None, length="0.05 mm", diameter="20 mm") for _ in range(3))]
     made = fs.Model("x", [fs.Shaft("s", rows, material="steel")])
-    assert notes(made)["s.segment_6.length"] == '"0.05 mm" is unusual; usual: 0.1 to 2e+04 mm, and 2 more'
+    assert notes(made)["s.segment_6.length"] == '"0.05 mm" is unusual; usual: 0.1 mm to 20000 mm, and 2 more'
 
 
 def test_many_names_are_cut() -> None:

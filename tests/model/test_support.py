@@ -99,7 +99,7 @@ def matrix(rows: object, **units: str) -> fs.Matrix:
             "bore_tilt is not written, only bore_tilt_angle. Write both, or neither.",
         ),
         ({"at": None}, "b.at", 'at is not written. Write at = "62 mm" (middle), or left_at or right_at (a face).'),
-        ({"left_at": "3 mm"}, "b.left_at", "at and left_at place it 2 times. Keep one."),
+        ({"left_at": "3 mm"}, "b.left_at", "at and left_at place it more than once. Keep one."),
         (
             {"at": None, "left_at": "3 mm"},
             "b.left_at",

@@ -19,7 +19,17 @@ from fe_shaft.results.verdict import Band
 from fe_shaft.results.words.layout import Column, paragraph, table
 from fe_shaft.results.words.wording import Names, clock_hours, plain
 from fe_shaft.units import show
-from tests.results.shafts import EVERY, beam, hostile, layshaft, three_bearings, twenty_cases, two_shafts
+from tests.results.shafts import (
+    EVERY,
+    STEEL,
+    beam,
+    hostile,
+    layshaft,
+    plain_shaft,
+    three_bearings,
+    twenty_cases,
+    two_shafts,
+)
 
 
 @cache
@@ -262,7 +272,7 @@ def test_signs_in_words(up, front, words):
     """A shaft moves the way it is pushed; it is so short that its weight does not count."""
     model = beam(fs.Force("load", at="50 mm", up=up, front=front), gravity="down", length="100 mm")
     text = str(fs.solve(model))
-    assert re.search(rf"the load moves [\d.]+ um {words}", text), text
+    assert re.search(rf": load moves [\d.]+ um {words}", text), text
 
 
 def test_without_gravity_or_upright_the_clock_is_used():
@@ -507,7 +517,7 @@ def test_less_movement_on_bearings_is_not_called_a_share():
     assert "-" not in text.split("\n\n")[0]
     comparison = compared("two")
     assert comparison.row("input_end.deflection").share[0] < 0
-    assert "the input_end moves" in comparison_text(comparison, "first").split("\n\n")[0].replace("\n", " ")
+    assert "input_end moves" in comparison_text(comparison, "first").split("\n\n")[0].replace("\n", " ")
 
 
 def test_two_models_tell_what_differs_first():
@@ -581,3 +591,81 @@ def test_a_band_is_in_the_order_of_its_heading():
     band = solved("layshaft").verdicts[0].band
     assert isinstance(band, Band)
     assert band.all_low > band.all_high  # half as stiff moves more
+
+
+# ---- rounding and doubts
+
+
+def test_rounding_does_not_stand_among_the_largest_values():
+    """A bearing in the middle of a symmetric shaft does not tilt (symmetry); 2e-16 mrad is no tilt."""
+    give = {"radial": "100 N/um"}
+    parts = [
+        plain_shaft("4.3 m"),
+        fs.Bearing("outer", at="60 mm", holds=["radial", "axial"], stiffness=give | {"axial": "50 N/um"}),
+        fs.Bearing("middle_one", at="2150 mm", holds=["radial"], stiffness=give),
+        fs.Bearing("other", at="4240 mm", holds=["radial"], stiffness=give),
+        *(fs.Force(f"load_{at}", at=f"{at} mm", up="-6 kN") for at in (1150, 3150)),
+    ]
+    model = fs.Model("Roller", parts, [fs.Case("loaded"), fs.Case("empty", forces=[])], materials=[STEEL])
+    results = fs.solve(model)
+    assert results.case("loaded")["middle_one"].tilt < 1e-12  # symmetry: only rounding is left
+    text = str(results)
+    assert len(row(text, "outer", "Largest of")) == 4  # its name, radial, tilt and force
+    assert len(row(text, "middle_one", "Largest of")) == 3
+
+
+@pytest.mark.parametrize(("force", "doubted"), [("-5 kN", False), ("-5 MN", True)])
+def test_movements_too_large_for_a_linear_solution_are_doubted(force, doubted):
+    """The end slope of a beam on two supports is F l^2 / 16 E I (statics): 6 mrad, and 6 rad."""
+    model = beam(fs.Force("load", at="200 mm", up=force))
+    assert ("Doubt" in results_text(fs.solve(model))) is doubted
+    assert ("Doubt" in comparison_text(fs.compare(model))) is doubted
+
+
+# ---- what a prompt or a notebook shows of one result
+
+
+@pytest.mark.parametrize("name", EVERY)
+def test_a_result_at_a_prompt_is_one_short_line(name):
+    results = solved(name)
+    one = results.case(results.cases[0])
+    for part in [*results, *one]:
+        for shown in (repr(results[part]), repr(one[part])):
+            assert "array" not in shown
+            assert "\n" not in shown
+            assert len(shown) < 1500
+    assert len(repr(results)) < 600
+
+
+def test_a_part_at_a_prompt_shows_its_quantities():
+    wheel = solved("layshaft").case("running")["wheel"]
+    assert f"deflection {show(wheel.deflection, 'um')}, up " in repr(wheel)
+    place = solved("layshaft")["layshaft"].at("wheel + 12 mm")
+    assert repr(place).startswith("<wheel + 12 mm: deflection [")
+
+
+def test_a_case_is_printed_like_the_results_with_that_case():
+    results = solved("layshaft")
+    assert str(results.case("starting")) == results_text(results, ["starting"])
+    assert results.case("starting")._repr_html_() == preformatted(str(results.case("starting")))
+
+
+# ---- what is handed over by mistake
+
+
+@pytest.mark.parametrize("verb", [fs.solve, fs.compare])
+@pytest.mark.parametrize("given", ["layshaft.toml", None, 3])
+def test_what_is_no_model_is_refused_in_words(verb, given):
+    with pytest.raises(fs.UsageError, match=f"takes a Model, not {type(given).__name__}"):
+        verb(given)
+
+
+def test_a_model_is_no_picture(tmp_path):
+    with pytest.raises(fs.UsageError, match=r"not Model\. Hand over solve"):
+        fs.picture(layshaft(), tmp_path / "model.png")
+    assert not list(tmp_path.iterdir())
+
+
+def test_an_address_without_a_quantity_is_refused_in_words():
+    with pytest.raises(fs.UsageError, match='"wheel" is not a part and its quantity'):
+        solved("layshaft").worst("wheel")

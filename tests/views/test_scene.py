@@ -195,6 +195,28 @@ def test_scale_line_has_the_length_it_says(scene):
     )
 
 
+def test_pictures_write_the_units_that_the_model_asks_for():
+    """In mil and lbf: the values are those of the results over 25.4 um and 4.4482216 N (yard and pound, 1959)."""
+    model = many().change({"units": {"force": "lbf", "length": "in", "angle": "deg"}})
+    results = solve(model)
+    made = Scene(results, size=SIZE)
+    try:
+        (half,) = texts(made)
+        written = " ".join(half.values())
+        assert half["bar unit"] == "[mil], true"
+        assert half["scale"].split()[1] == "mil"
+        assert half["factor"].split("true: ")[1].split()[1] == "mil"
+        assert " lbf" in written
+        assert not {"um", "N", "kN", "m", "mm", "mrad"} & set(written.split())
+        _, high = made.halves[0].shown.limits
+        largest = max(line.deflection[0].max() for line in results.lines.values())
+        assert high == pytest.approx(largest / 25.4e-6, rel=0.02)
+        made.colour_by("slope")
+        assert texts(made)[0]["bar unit"] == "[deg], true"
+    finally:
+        made.close()
+
+
 def test_picture_shows_dark_pins_and_bright_bearings(scene):
     """Deflection on pins is a sixth of the range, on the bearings nearly all of it: blue on the left, yellow right."""
     picture = pixels(scene).astype(int)

@@ -75,6 +75,7 @@ except UsageError as error:
 def test_a_display_that_does_not_answer_is_named():
     done = run(":987", "-W", "error", "-c", NO_SERVER)
     assert done.stdout == (
-        "the display :987 cannot be opened for a window. Write a picture instead: --picture FILE.png.\n"
+        "the display :987 cannot be opened for a window. Write a picture instead: --picture FILE.png, or "
+        "fs.picture(results, FILE) in a script.\n"
     )
     assert (done.returncode, done.stderr) == (0, "")

@@ -10,6 +10,7 @@ import numpy as np
 import pytest
 from PIL import Image
 
+from fe_shaft.views.graphics import on_screen
 from fe_shaft.views.quantities import COLOURINGS
 from fe_shaft.views.window import KEYS, Window
 from tests.views.demo import pinned, solved
@@ -178,3 +179,12 @@ def test_slider_moves_only_the_geometry(window):
     meshes = [moved.mesh for half in window.scene.halves for moved in half._skins]
     window._slide(2.5)
     assert meshes == [moved.mesh for half in window.scene.halves for moved in half._skins]
+
+
+def test_window_is_no_larger_than_the_screen(window):
+    width, height = window.plotter.render_window.GetScreenSize()
+    assert on_screen((width // 2, height // 2)) == (width // 2, height // 2)
+    wide, high = on_screen((3 * width, 2 * height))
+    assert wide < width
+    assert high < height
+    assert wide / high == pytest.approx(3 * width / (2 * height), rel=0.01)

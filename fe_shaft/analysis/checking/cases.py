@@ -48,7 +48,7 @@ class _Reader:
         like, factor = self._like(k)
         return CaseCheck(
             name=case.name,
-            power=power_in_words(case),
+            power=power_in_words(case, Shown.of(self.model).moment),
             torque=case_torque(case),
             loads=tuple(self._loads(case, k)),
             balances=tuple(self._balance(shaft.name, k) for shaft in self.model.shafts),
@@ -61,6 +61,7 @@ class _Reader:
     def _loads(self, case: Case, k: int) -> Iterator[LoadCheck]:
         enters, leaves = set(case.enters_shares), set(case.leaves_shares)
         driven, driving = (leaves, enters) if case.coasts else (enters, leaves)
+        unit = Shown.of(self.model).moment
         for act in self.acts:
             force, couple = act.force[k], act.couple[k]
             if act.kind == "weight" or (act.kind != "force" and not (force.any() or couple.any())):
@@ -68,7 +69,7 @@ class _Reader:
             role = "driven" if act.part in driven else "drives" if act.part in driving else ""
             if act.kind == "force":  # with what its lever adds to the torque
                 couple = np.array([act.wrench[k, RX], couple[1], couple[2]])
-            words = (*self._force(act, force), *couple_in_words(couple)) or ("switched off",)
+            words = (*self._force(act, force), *couple_in_words(couple, unit)) or ("switched off",)
             axial, up, front = (float(each) for each in force)
             yield LoadCheck(act.part, role, act.kind, axial, up, front, float(act.wrench[k, RX]), words)
 
@@ -109,7 +110,9 @@ class _Reader:
         torque_held = self._torque_held(shaft, k, _sum(torques))
         words = (
             self._thrust_in_words(shaft, thrust, held),
-            _torque_in_words(torque_in, torque_out, torque_held, self._free_to_turn(shaft)),
+            _torque_in_words(
+                torque_in, torque_out, torque_held, Shown.of(self.model).moment, free=self._free_to_turn(shaft)
+            ),
         )
         return BalanceCheck(shaft, thrust, held, torque_in, torque_out, torque_held, words)
 
@@ -154,16 +157,16 @@ def _holders(held: dict[str, float], unit: str) -> str:
     return listed([f"{name} ({show(abs(size), unit)})" for name, size in held.items()])
 
 
-def _torque_in_words(into: float, out: float, held: dict[str, float], free: bool) -> str:
+def _torque_in_words(into: float, out: float, held: dict[str, float], unit: str, *, free: bool) -> str:
     if not into:
         return "No torque" if free else ""
     if into == out:
-        return f"Torque in = out: {show(into, 'N m', 4)}"
-    words = f"Torque in {show(into, 'N m', 4)}, out {show(out, 'N m', 4)}"
+        return f"Torque in = out: {show(into, unit, 4)}"
+    words = f"Torque in {show(into, unit, 4)}, out {show(out, unit, 4)}"
     if not held:
         return words
     what = f"{'taken out at' if free else 'held by'} {listed(tuple(held))}"
-    return f"{words}; {show(into - out, 'N m', 4)} {what}" if out else f"Torque {show(into, 'N m', 4)}, {what}"
+    return f"{words}; {show(into - out, unit, 4)} {what}" if out else f"Torque {show(into, unit, 4)}, {what}"
 
 
 def _sum(terms: list[float]) -> float:
@@ -172,11 +175,11 @@ def _sum(terms: list[float]) -> float:
     return total if abs(total) > NOTHING * sum(map(abs, terms)) else 0.0
 
 
-def power_in_words(case: Case) -> str:
-    """Power, speed, torque and turning of a case: "5.5 kW at 393.7 rpm is 133 N m; clockwise from left (...)"."""
+def power_in_words(case: Case, unit: str) -> str:
+    """Power, speed, torque (in a unit) and turning: "5.5 kW at 393.7 rpm is 133 N m; clockwise from left (...)"."""
     if not case.enters_shares and not case.leaves_shares:
         return f"no power; {_forces_of(case) or 'all forces act'}"
-    torque = show(case.torque_si / (case.torque_factor or 1.0), "N m")
+    torque = show(case.torque_si / (case.torque_factor or 1.0), unit)
     if case.torque is not None:
         words = f"{case.torque.text}{_speed(case)}"
     elif case.power is not None and case.speed is not None:
@@ -184,7 +187,7 @@ def power_in_words(case: Case) -> str:
     else:
         words = "no torque"
     if case.torque_factor != 1.0:
-        words += f", times {case.torque_factor:g} is {show(case.torque_si, 'N m')}"
+        words += f", times {case.torque_factor:g} is {show(case.torque_si, unit)}"
     return "; ".join([words, *_turning(case), *filter(None, [_forces_of(case)])])
 
 

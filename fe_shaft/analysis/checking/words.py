@@ -41,14 +41,14 @@ def way(axis: str, size: float, *, level: bool) -> str:
     return _WAYS[axis][0 if level else 1][0 if size >= 0 else 1]
 
 
-def couple_in_words(couple: Array) -> tuple[str, ...]:
-    """A couple (3,) [N m] in the shaft's frame; the torque first."""
+def couple_in_words(couple: Array, unit: str) -> tuple[str, ...]:
+    """A couple (3,) [N m] in the shaft's frame, said in a unit; the torque first."""
     largest = float(np.abs(couple).max(initial=0.0))
     out = []
     axes = ("turning it {}", "about 12 o'clock, {}", "about 3 o'clock, {}")
     for phrase, size in zip(axes, couple, strict=True):
         if abs(size) > UNSEEN * largest:
-            out.append(f"{show(abs(float(size)), 'N m')} {phrase.format(turning(float(size)))}")
+            out.append(f"{show(abs(float(size)), unit)} {phrase.format(turning(float(size)))}")
     return tuple(out)
 
 

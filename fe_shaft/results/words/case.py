@@ -12,7 +12,7 @@ from fe_shaft.results.words.hand import hand_check, hand_sentence
 from fe_shaft.results.words.layout import paragraph
 from fe_shaft.results.words.page import WORTH, Page, featured
 from fe_shaft.results.words.tables import forces, movement, noise, seats
-from fe_shaft.results.words.wording import clock_hours, is_level
+from fe_shaft.results.words.wording import called, clock_hours, is_level
 from fe_shaft.units import show
 
 MOST_SENTENCES = 8
@@ -46,7 +46,7 @@ def sentences(page: Page, k: int) -> list[str]:
     head = f"{page.heading(case)}: "
     sizes = {name: float(np.hypot(*page.results.parts[name].u[k, 1:3])) for name in featured(page)}
     worth = [name for name, size in sizes.items() if size >= WORTH * max(sizes.values())]
-    told = [f"the {names[name]} {_moves(page, name, k)}." for name in worth]
+    told = [f"{called(page.results, name, names[name])} {_moves(page, name, k)}." for name in worth]
     if not told:
         return []
     lines = paragraph(told[0], " " * min(len(head), 20), first=head)

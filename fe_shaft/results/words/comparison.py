@@ -14,7 +14,7 @@ from fe_shaft.results.words.layout import Column, fitting, on_the_point, paragra
 from fe_shaft.results.words.page import Page
 from fe_shaft.results.words.verdicts import usual_bands
 from fe_shaft.results.words.view import WORDS, View, change, percent
-from fe_shaft.results.words.wording import NOTHING, number, plain
+from fe_shaft.results.words.wording import NOTHING, called, number, plain
 
 if TYPE_CHECKING:
     from fe_shaft.results.comparison import Comparison, Row
@@ -54,8 +54,9 @@ def _answer(view: View) -> str:
         f"{percent(row.share[view.k])} of the {names[row.part]}'s {'movement' * (n == 0)}".rstrip()
         for n, row in enumerate(more)
     ]
+    subjects = {row.part: called(view.page.results, row.part, names[row.part]) for row in rows}
     less = [
-        f"the {names[row.part]} moves {percent(-change(row, view.k))} less than on pins"
+        f"{subjects[row.part]} moves {percent(-change(row, view.k))} less than on pins"
         for row in rows
         if row not in more
     ]
@@ -148,7 +149,8 @@ def _moved(view: View) -> list[str]:
     for row in view.main_rows():
         left, right = float(row.left[view.k]), float(row.right[view.k])
         by = f" ({_signed_percent(change(row, view.k))})" if left else ""
-        told.append(f"the {names[row.part]} moves {view.value(row, left)}, then {view.value(row, right)}{by}")
+        who = called(view.comparison.right, row.part, names[row.part])
+        told.append(f"{who} moves {view.value(row, left)}, then {view.value(row, right)}{by}")
     if not told:
         return []
     return paragraph(f"{view.page.heading(view.page.results.cases[view.k])}: {'; '.join(told)}.")

@@ -2,16 +2,18 @@
 
 from __future__ import annotations
 
+from functools import cache, partial
 from typing import TYPE_CHECKING
 
 import numpy as np
 
 from fe_shaft.results.movement import SupportMovement
+from fe_shaft.results.quantity import QUANTITIES
 from fe_shaft.results.words.layout import Column, fitting, shortened, table
+from fe_shaft.results.words.tables import noise
 from fe_shaft.results.words.wording import number
 
 if TYPE_CHECKING:
-    from fe_shaft.results.results import Results
     from fe_shaft.results.words.page import Page
 
 
@@ -22,7 +24,17 @@ def envelope(page: Page) -> list[str]:
     supports = [name for name in names if isinstance(results.parts[name], SupportMovement)]
     others = [name for name in names if name not in supports]
     wanted = {"deflection": names, "slope": others, "tilt": supports, "force": supports}
-    found = {quantity: {name: _largest(results, name, quantity) for name in of} for quantity, of in wanted.items()}
+    shaft = {name: on for on, parts in page.on.items() for name in parts}
+    quiet = cache(partial(noise, page))
+
+    def largest(name: str, quantity: str) -> tuple[float, str]:
+        """Largest size over the cases, and its case; 0 where it is rounding."""
+        sizes = np.abs(np.asarray(results.parts[name].value(quantity)))
+        k = int(sizes.argmax())
+        loud = sizes[k] > quiet(shaft[name], k)[QUANTITIES[quantity].dimension]
+        return float(sizes[k]) if loud else 0.0, results.cases[k]
+
+    found = {quantity: {name: largest(name, quantity) for name in of} for quantity, of in wanted.items()}
     governing = {case for values in found.values() for value, case in values.values() if value}
     one = next(iter(governing)) if len(governing) == 1 else None
 
@@ -45,10 +57,3 @@ def envelope(page: Page) -> list[str]:
         return table(columns, gap=gap) if len(columns) > 1 else []
 
     return shortened(fitting(make), len(names), 2)
-
-
-def _largest(results: Results, name: str, quantity: str) -> tuple[float, str]:
-    """Largest size over the cases, and its case."""
-    sizes = np.abs(np.asarray(results.parts[name].value(quantity)))
-    k = int(sizes.argmax())
-    return float(sizes[k]), results.cases[k]

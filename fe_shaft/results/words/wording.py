@@ -12,10 +12,12 @@ from collections.abc import Iterable, Sequence
 from typing import TYPE_CHECKING
 
 from fe_shaft.model.actions import gravity_in_shaft
+from fe_shaft.model.loads import Coupling, Force
 from fe_shaft.units import show
 
 if TYPE_CHECKING:
     from fe_shaft.model.system import Model
+    from fe_shaft.results.results import Results
 
 _SIGNS = str.maketrans({
     "\N{MICRO SIGN}": "u", "\N{GREEK SMALL LETTER MU}": "u", "\N{DEGREE SIGN}": " deg", "\N{MIDDLE DOT}": "*",
@@ -106,3 +108,8 @@ def number(si: float, unit: str, *, sign: bool = False, digits: int = 3) -> str:
 def listed(words: Sequence[str]) -> str:
     """Such as "a, b and c"."""
     return words[0] if len(words) == 1 else f"{', '.join(words[:-1])} and {words[-1]}" if words else ""
+
+
+def called(results: Results, name: str, shown: str) -> str:
+    """A part as the subject of a sentence: "the wheel", but a force or a coupling by its bare name."""
+    return shown if isinstance(results.model[name], Force | Coupling) else f"the {shown}"
