@@ -27,13 +27,15 @@ def diameters(n: int) -> list[float]:
 
 
 def our_model(n: int, *, shear: str | float = "cowper") -> fs.Model:
-    """A shaft of 1 m in n segments; n a multiple of 10."""
-    segments = [fs.Segment(length=f"{1000 / n!r} mm", diameter=f"{d!r} m") for d in diameters(n)]
+    """A shaft of 1 m (longer where its segments would be thinner than 0.12 mm) in n segments; n a multiple of 10."""
+    step = max(1000 / n, 0.12)
+    long = step * n / 1000
+    segments = [fs.Segment(length=f"{step!r} mm", diameter=f"{d!r} m") for d in diameters(n)]
     shaft = fs.Shaft("shaft", segments, material="bench_steel", shear=shear)
     bearings = [
         fs.Bearing(
             name,
-            at=f"{x} m",
+            at=f"{x * long!r} m",
             holds=["radial", "axial"] if STIFFNESS[name][0] else ["radial"],
             stiffness={"radial": f"{STIFFNESS[name][1] / 1e6} N/um"}
             | ({"axial": f"{STIFFNESS[name][0] / 1e6} N/um"} if STIFFNESS[name][0] else {}),
@@ -41,8 +43,8 @@ def our_model(n: int, *, shear: str | float = "cowper") -> fs.Model:
         for name, x in PLACES.items()
     ]
     loads = [
-        fs.Force("first", at="0.3 m", up="1 kN", front="300 N", radius="50 mm", angle="3 o'clock"),
-        fs.Force("second", at="0.7 m", up="-1 kN", front="800 N", radius="50 mm", angle="3 o'clock"),
+        fs.Force("first", at=f"{0.3 * long!r} m", up="1 kN", front="300 N", radius="50 mm", angle="3 o'clock"),
+        fs.Force("second", at=f"{0.7 * long!r} m", up="-1 kN", front="800 N", radius="50 mm", angle="3 o'clock"),
     ]
     return fs.Model("benchmark", [shaft, *bearings, *loads], materials=[STEEL])
 

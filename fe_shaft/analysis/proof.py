@@ -15,7 +15,7 @@ from numpy.typing import NDArray
 from fe_shaft.analysis.reactions import Reactions
 from fe_shaft.analysis.solution import Solved
 from fe_shaft.errors import SolutionError
-from fe_shaft.fem.span import load_energy
+from fe_shaft.fem.span import loaded_energy
 from fe_shaft.results.proof import REFUSED_ABOVE, Proof
 
 Array = NDArray[np.float64]
@@ -36,7 +36,7 @@ def prove(solved: Solved, carried: Reactions) -> Proof:
     balance = [_equilibrium(solved, carried, shaft) for shaft in solved.grid.shafts]
     forces, moments = balance[0] if len(balance) == 1 else np.max(balance, axis=0)
     energies = _energies(solved)
-    find = partial(_details, solved, energies.extra)
+    find = partial(_details, solved, energies.of_spans)
     proof = Proof(forces, moments, solved.solution.residual, energies.imbalance(solved.solution.resistance[1]), find)
     if not proof.worst <= REFUSED_ABOVE:
         raise SolutionError(
@@ -70,14 +70,14 @@ def _equilibrium(solved: Solved, carried: Reactions, shaft: str) -> Array:
 class _Energies(NamedTuple):
     """Twice the energies and twice the work of all loads and offsets, (n_cases,) each.
 
-    Twice the work of the loads is F u + R g + s e_load + L, twice the energy of the spans s f s + 2 s e_load + L,
-    where L is the energy of the loads' own part alone; it stands on both sides (`extra`: s e_load, and L by span).
+    Twice the work of the loads is F u + R g, plus what the section forces do on the deformations that spread loads would
+    make by themselves; `of_spans` is the energy of each span where there are such loads.
     """
 
     spans: Array
     springs: Array
     work: Array
-    extra: tuple[Array, Array] | None
+    of_spans: Array | None
 
     def imbalance(self, least: float) -> Array:
         """Energy against work, relative to them; both below `least` are measured by it."""
@@ -91,15 +91,14 @@ def _energies(solved: Solved) -> _Energies:
     spans = _products(s, s * solved.spans.flexibility[:, :, None])
     in_springs = _products(solution.spring_deformation, solution.spring_force)
     work = _products(loads.nodal, solution.u[: len(loads.nodal)])
-    extra = None
+    of_spans = None
     if loads.deformation is not None:
-        extra = (s * loads.deformation).sum(axis=1), load_energy(solved.grid.pieces, loads.spread)
-        cross, alone = extra[0].sum(axis=0), extra[1].sum(axis=0)
-        spans, work = spans + 2 * cross + alone, work + cross + alone
+        of_spans, mixed = loaded_energy(solved.grid.pieces, solved.spans.centre, s, loads.spread)
+        spans, work = of_spans.sum(axis=0), work + mixed.sum(axis=0)
     if solved.table.gaps:
         work = work + (solution.unbalanced * solved.offset).sum(axis=(0, 1))
         work = work - (solution.spring_force * springs.gap[:, :, None]).sum(axis=(0, 1))
-    return _Energies(spans, in_springs, work, extra)
+    return _Energies(spans, in_springs, work, of_spans)
 
 
 def _products(force: Array, movement: Array) -> Array:
@@ -107,13 +106,11 @@ def _products(force: Array, movement: Array) -> Array:
     return np.asarray((force * movement).reshape(-1, force.shape[-1]).sum(axis=0))
 
 
-def _details(solved: Solved, extra: tuple[Array, Array] | None) -> tuple[Array, dict[str, Array]]:
+def _details(solved: Solved, of_spans: Array | None) -> tuple[Array, dict[str, Array]]:
     """Digits lost, and the energy stored by part [J]."""
     solution = solved.solution
     s = solution.span_force
-    per_span = (s * s * solved.spans.flexibility[:, :, None]).sum(axis=1)
-    if extra is not None:
-        per_span = per_span + 2 * extra[0] + extra[1]
+    per_span = (s * s * solved.spans.flexibility[:, :, None]).sum(axis=1) if of_spans is None else of_spans
     per_spring = (solution.spring_deformation * solution.spring_force).sum(axis=1)
     stored = {name: per_span[own.spans].sum(axis=0) / 2 for name, own in solved.grid.shafts.items()}
     names = solved.table.names

@@ -191,20 +191,34 @@ def load_deformation(pieces: Pieces, spans: Spans, load: Gathered) -> Array:
     return out
 
 
-def load_energy(pieces: Pieces, loads: Sequence[tuple[Gathered, Array]]) -> Array:
-    """Twice the energy that the loads' own parts would store by themselves, (n_spans, n_cases).
+def loaded_energy(pieces: Pieces, centre: Array, s: Array, loads: Sequence[tuple[Gathered, Array]]) -> tuple[Array, Array]:
+    """Twice the energy of each span, and the part of it that the forces do on the loads' own deformation.
+
+    From the section forces themselves, so that a heavy overhang whose own part and stored forces all but cancel keeps its
+    digits: the integral of f^2 and that of f times the loads' own part, each over the stiffness.
 
     Parameters
     ----------
+    centre, s : (n_spans,), (n_spans, 6, n_cases)
+        Elastic centres and stored forces.
     loads : pairs of a unit load and its wrench density (n_spans, 6, n_cases or 1)
+
+    Returns
+    -------
+    two (n_spans, n_cases)
     """
     points = pieces.points
-    force: Array | int = 0
+    load_part: Array | int = 0
     for load, density in loads:
-        force = force + _load_forces(load.mu, load.nu, _by_component(density, pieces)[:, :, None])
+        load_part = load_part + _load_forces(load.mu, load.nu, _by_component(density, pieces)[:, :, None])
+    offset = stretch(centre, pieces) - pieces.left - points.eta
+    of_points = np.repeat(_by_component(s, pieces)[:, :, None], len(points.eta), axis=2)
+    force = _own_forces(of_points, offset) + load_part
     give = np.array((points.axial, points.shear, points.shear, points.torsion, points.bending, points.bending))
-    per_piece = (give[:, None] * np.square(force)).sum(axis=(0, 2))
-    return np.add.reduceat(per_piece, pieces.starts, axis=-1).T
+    weighed = give[:, None] * force
+    both = ((weighed * part).sum(axis=(0, 2)) for part in (force, load_part))
+    stored, mixed = (np.add.reduceat(per_piece, pieces.starts, axis=-1).T for per_piece in both)
+    return stored, mixed
 
 
 def end_load(load: Gathered, pieces: Pieces) -> Array:
