@@ -151,14 +151,30 @@ def _join(model: Model, laid: list[_Laid]) -> Grid:
     x = _cat([part.ends[part.station] for part in laid])
     left = _cat([np.arange(own.nodes.start, own.nodes.stop - 1) for own in shafts.values()])
     right = left + 1
+    node_of = _nodes_of(model, shafts, x.tolist())
     return Grid(
         x=x,
         left=left,
         right=right,
         length=x[right] - x[left],
-        pieces=_pieces([model.segment_arrays[name] for name in shafts], laid, x[left], pieces),
+        pieces=_pieces(
+            [model.segment_arrays[name] for name in shafts], laid, x[left], pieces, _hanging(model, shafts, node_of)
+        ),
         shafts=shafts,
-        node_of=_nodes_of(model, shafts, x.tolist()),
+        node_of=node_of,
+    )
+
+
+def _hanging(model: Model, shafts: Mapping[str, ShaftGrid], node_of: Mapping[str, int]) -> tuple[int, ...]:
+    """Spans to the right of the last support of their shaft."""
+    last = {name: own.nodes.start for name, own in shafts.items()}
+    for support in model.supports:
+        shaft = model.places[support.name].shaft
+        last[shaft] = max(last[shaft], node_of[support.name])
+    return tuple(
+        span
+        for name, own in shafts.items()
+        for span in range(own.spans.start + last[name] - own.nodes.start, own.spans.stop)
     )
 
 
@@ -176,7 +192,9 @@ def _cat(arrays: list[NDArray[Any]]) -> NDArray[Any]:
     return arrays[0] if len(arrays) == 1 else np.concatenate(arrays)
 
 
-def _pieces(arrays: list[SegmentArrays], laid: list[_Laid], span_left: Array, n_pieces: int) -> Pieces:
+def _pieces(
+    arrays: list[SegmentArrays], laid: list[_Laid], span_left: Array, n_pieces: int, hanging: tuple[int, ...]
+) -> Pieces:
     shifts = accumulate((len(part.segment) for part in laid), initial=0)
     starts = _cat([_shifted(part.station[:-1], shift) for part, shift in zip(laid, shifts, strict=False)])
     counts = np.concatenate([starts[1:], [n_pieces]]) - starts
@@ -196,6 +214,7 @@ def _pieces(arrays: list[SegmentArrays], laid: list[_Laid], span_left: Array, n_
         share_left=shares[0],
         share_right=shares[1],
         chains=tuple(accumulate(len(part.segment) for part in laid[:-1])),
+        hanging=hanging,
     )
 
 

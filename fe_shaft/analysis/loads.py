@@ -13,7 +13,7 @@ from fe_shaft.analysis.load_words import spin_sentence
 from fe_shaft.errors import LoadError
 from fe_shaft.fem.dofs import NDOF
 from fe_shaft.fem.frames import move_wrench
-from fe_shaft.fem.span import Gathered, Spans, end_load, gather_mass, gather_uniform, load_deformation
+from fe_shaft.fem.span import Gathered, Spans, end_loads, gather_mass, gather_uniform, load_deformation
 from fe_shaft.model.actions import case_names, gravity_in_shaft
 
 if TYPE_CHECKING:
@@ -33,7 +33,7 @@ class Loads(NamedTuple):
     Attributes
     ----------
     nodal : (n_nodes, 6, n_cases) [N, N m]
-        Point loads, and what spread loads and weights hand to the right nodes of their spans.
+        Point loads, and what spread loads and weights hand to the nodes of their spans.
     spread : pairs of a unit load and its density (n_spans, 6, n_cases or 1)
         Spread loads [N/m, N m/m]; the shafts' own mass, with gravity for its density [m/s^2].
     density : (n_spans, 6, n_cases) or None
@@ -62,7 +62,9 @@ def apply_loads(model: Model, grid: Grid, spans: Spans, actions: Sequence[Action
         return Loads(nodal, (), density, None)
     deformation = np.zeros((len(grid.left), NDOF, n_cases))
     for load, of_spans in families:
-        nodal[grid.right] += end_load(load, grid.pieces) @ of_spans
+        at_left, at_right = end_loads(load, grid.pieces)
+        nodal[grid.left] += at_left @ of_spans
+        nodal[grid.right] += at_right @ of_spans
         deformation += load_deformation(grid.pieces, spans, load) @ of_spans
     return Loads(nodal, tuple(families), density, deformation)
 

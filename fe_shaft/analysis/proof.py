@@ -70,8 +70,8 @@ def _equilibrium(solved: Solved, carried: Reactions, shaft: str) -> Array:
 class _Energies(NamedTuple):
     """Twice the energies and twice the work of all loads and offsets, (n_cases,) each.
 
-    Twice the work of the loads is F u + R g, plus what the section forces do on the deformations that spread loads would
-    make by themselves; `of_spans` is the energy of each span where there are such loads.
+    Twice the work of the loads is F u + R g, plus what the section forces do on the deformations that spread loads
+    would make by themselves; `of_spans` is the energy of each span where there are such loads.
     """
 
     spans: Array

@@ -105,6 +105,7 @@ class Pieces:
     share_left, share_right : (m,) or None
         Where in its segment a piece begins and ends, 0 to 1; None without cones.
     chains : first piece of each further chain of spans (a model's other shafts)
+    hanging : spans beyond their chain's last support: loads gather from their free right ends
     """
 
     starts: Ints
@@ -116,6 +117,7 @@ class Pieces:
     share_left: Array | None = None
     share_right: Array | None = None
     chains: tuple[int, ...] = ()
+    hanging: tuple[int, ...] = ()
 
     @property
     def tapered(self) -> bool:

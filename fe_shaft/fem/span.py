@@ -22,7 +22,7 @@ N = -f_x mu, V = -f mu, M_x = -m_x mu, M_y = -m_y mu - f_z nu, M_z = -m_z mu + f
 
 from __future__ import annotations
 
-from collections.abc import Sequence
+from collections.abc import Callable, Sequence
 from functools import cached_property
 from typing import NamedTuple
 
@@ -124,6 +124,8 @@ class Gathered(NamedTuple):
     """A distributed load of unit size: what has gathered up to a place, seen from the span's left node.
 
     mu is the load itself, nu its moment about that place; at the points (q, m) and at both ends of each piece (m,).
+    In spans that hang it gathers from the right end, with mu below 0, so that the forces near a free end keep their
+    digits.
     """
 
     mu: Array
@@ -134,10 +136,12 @@ class Gathered(NamedTuple):
     nu_right: Array
 
 
+Inside = Callable[[Array], tuple[Array, Array]]
+
+
 def gather_uniform(pieces: Pieces) -> Gathered:
     """A load of 1 per length along each span."""
-    x, right = pieces.left + pieces.points.eta, pieces.left + pieces.length
-    return Gathered(x, x**2 / 2, pieces.left, pieces.left**2 / 2, right, right**2 / 2)
+    return _gather(pieces, lambda h: (h, h * h / 2))
 
 
 def gather_mass(pieces: Pieces) -> Gathered:
@@ -146,13 +150,21 @@ def gather_mass(pieces: Pieces) -> Gathered:
     The area of a cone is a quadratic along it, so mu is a cubic and nu a quartic, both exact.
     """
     c0, c1, c2 = pieces.mass_per_length
+    return _gather(
+        pieces,
+        lambda h: (h * (c0 + h * (c1 / 2 + h * c2 / 3)), h * h * (c0 / 2 + h * (c1 / 6 + h * c2 / 12))),
+    )
 
-    def inside(h: Array) -> tuple[Array, Array]:
-        return h * (c0 + h * (c1 / 2 + h * c2 / 3)), h * h * (c0 / 2 + h * (c1 / 6 + h * c2 / 12))
 
+def _gather(pieces: Pieces, inside: Inside) -> Gathered:
+    """Gather a load of which `inside` gives the amount in the first h of each piece, and its moment about h."""
     own, own_moment = inside(pieces.length)
     mu_left, mu_right = _run(own, pieces)
     nu_left, nu_right = _run(mu_left * pieces.length + own_moment, pieces)
+    for span in pieces.hanging:
+        at = slice(pieces.starts[span], pieces.starts[span] + pieces.counts[span])
+        mu_left[at], mu_right[at] = _run_back(own[at])
+        nu_left[at], nu_right[at] = _run_back(mu_left[at] * pieces.length[at] + own_moment[at])
     mu, nu = inside(pieces.points.eta)
     return Gathered(mu + mu_left, nu + nu_left + mu_left * pieces.points.eta, mu_left, nu_left, mu_right, nu_right)
 
@@ -162,6 +174,12 @@ def _run(steps: Array, pieces: Pieces) -> tuple[Array, Array]:
     before = sums_before(steps, pieces)
     before -= stretch(before[..., pieces.starts], pieces)
     return before, before + steps
+
+
+def _run_back(steps: Array) -> tuple[Array, Array]:
+    """Running sums that end in 0 at the right end: value left and right of each piece."""
+    left = -steps[::-1].cumsum()[::-1]
+    return left, np.append(left[1:], 0.0)
 
 
 def load_deformation(pieces: Pieces, spans: Spans, load: Gathered) -> Array:
@@ -191,11 +209,13 @@ def load_deformation(pieces: Pieces, spans: Spans, load: Gathered) -> Array:
     return out
 
 
-def loaded_energy(pieces: Pieces, centre: Array, s: Array, loads: Sequence[tuple[Gathered, Array]]) -> tuple[Array, Array]:
+def loaded_energy(
+    pieces: Pieces, centre: Array, s: Array, loads: Sequence[tuple[Gathered, Array]]
+) -> tuple[Array, Array]:
     """Twice the energy of each span, and the part of it that the forces do on the loads' own deformation.
 
-    From the section forces themselves, so that a heavy overhang whose own part and stored forces all but cancel keeps its
-    digits: the integral of f^2 and that of f times the loads' own part, each over the stiffness.
+    From the section forces themselves: the integrals of their square and of them times the loads' own part, each over
+    the stiffness. Sums of the stored forces' energy and the loads' would cancel.
 
     Parameters
     ----------
@@ -221,13 +241,15 @@ def loaded_energy(pieces: Pieces, centre: Array, s: Array, loads: Sequence[tuple
     return stored, mixed
 
 
-def end_load(load: Gathered, pieces: Pieces) -> Array:
-    """Wrench that the load's own part hands to the right node; (n_spans, 6, 6), times a wrench density."""
-    last = pieces.last
-    mu, nu = load.mu_right[last], load.nu_right[last]
-    out = mu[:, None, None] * _ONES
-    out[:, 4, 2], out[:, 5, 1] = nu, -nu
-    return out
+def end_loads(load: Gathered, pieces: Pieces) -> tuple[Array, Array]:
+    """Wrenches that the load's own part hands to the left and right nodes; (n_spans, 6, 6), times a wrench density."""
+    at_left, at_right = (
+        -_ONES[None] * load.mu_left[pieces.starts, None, None],
+        _ONES * load.mu_right[pieces.last, None, None],
+    )
+    for out, nu in ((at_left, -load.nu_left[pieces.starts]), (at_right, load.nu_right[pieces.last])):
+        out[:, 4, 2], out[:, 5, 1] = nu, -nu
+    return at_left, at_right
 
 
 def _by_component(of_spans: Array, pieces: Pieces) -> Array:

@@ -29,7 +29,8 @@ class Statics:
     arm : [m]
         The longest lever: the shaft's length or the farthest point where a force attacks.
     turning : (n_cases,) [N m]
-        Sum of the sizes of all torques about the axis.
+        Sum of the sizes of all torques about the axis, a force at a lever counted as if it attacked across it: a mass
+        at 6 o'clock pulls at 1e-16 of its lever, which is rounding and no torque.
     """
 
     resultant: Array
@@ -51,7 +52,8 @@ def _of(model: Model, shaft: str) -> Statics:
         if action.shaft == shaft:
             resultant += _about_left_end(action.wrench.T, action.x)
             size += np.abs(action.force).sum(axis=1) + np.abs(action.couple).sum(axis=1) / length
-            turning += np.abs(action.wrench[:, 3])
+            lever = float(np.hypot(action.arm[1], action.arm[2]))
+            turning += np.abs(action.couple[:, 0]) + lever * np.hypot(action.force[:, 1], action.force[:, 2])
             arm = max(arm, action.reach)
     if model.gravity_vector.any():
         mass, centre = shaft_mass(model, shaft)

@@ -14,9 +14,10 @@ from numpy.typing import NDArray
 from tests.oracle.shaft_spec import ForceSpec, SegmentSpec, ShaftSpec
 
 Array = NDArray[np.float64]
-#: A kind that is smaller than this share of its family (forces, moments, shifts, turns), or a torque smaller than this
-#: share of the torques it is the difference of, is compared with that share: its own digits are rounding of theirs.
-SMALL = 1e-4
+#: What lies across the axis is one kind (12 and 3 o'clock are only where the viewer stands): ux | uy, uz | rx | ry, rz
+#: and N | V | M_x | M_y, M_z. A kind that is smaller than this share of its family (shifts, turns, forces, moments), or
+#: a torque smaller than this share of the torques it is the difference of, is compared with that share.
+SMALL, SMALL_TORQUE = 1e-4, 1e-3
 GAUSS = np.polynomial.legendre.leggauss(3)  # areas of cones are quadratic, their moments cubic: exact
 
 
@@ -163,11 +164,12 @@ def _area(segment: SegmentSpec, at: float) -> float:
 def scales(spec: ShaftSpec, u: Array, *forces: Array) -> tuple[Array, Array]:
     """Largest displacement of each kind and largest section force of each kind, (n_cases, 1, 6)."""
     size_u, size_f = (np.abs(values).max(axis=1, keepdims=True) for values in (u, np.concatenate(forces, axis=1)))
-    torque = SMALL * torque_size(spec)
+    torque = SMALL_TORQUE * torque_size(spec)
     size_f[..., 3] = np.maximum(size_f[..., 3], torque)
     size_u[..., 3] = np.maximum(size_u[..., 3], torque * torsional_flexibility(spec))
     for size in (size_u, size_f):
         for family in (size[..., :3], size[..., 3:]):
+            family[..., 1:] = family[..., 1:].max(axis=-1, keepdims=True)
             np.maximum(family, SMALL * family.max(axis=-1, keepdims=True), out=family)
     return size_u, size_f
 

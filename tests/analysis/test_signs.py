@@ -415,6 +415,27 @@ def test_torque_that_is_left_over_is_taken_out_where_power_leaves_and_said():
     np.testing.assert_allclose(torque, expected, atol=1e-12)
 
 
+@pytest.mark.parametrize("clock", ["12 o'clock", "3 o'clock", "6 o'clock", "9 o'clock", "4:30 o'clock", "217.3 deg"])
+def test_a_force_along_its_lever_is_no_torque(clock):
+    """Sines of whole hours are 1e-16 and not 0: that must not spin a shaft, nor be taken out and noted."""
+    pins = [fs.Pin("one", at="0 mm", holds=["radial", "axial"]), fs.Pin("two", at="200 mm", holds=["radial"])]
+    angle = fs.Force("any", at="0 mm", up="1 N", radius="1 mm", angle=clock).angle.si
+    up, front = 1000 * math.cos(angle), 1000 * math.sin(angle)
+    force = fs.Force(
+        "force", at="80 mm", up=f"{up!r} N", front=f"{front!r} N", radius="60 mm", angle=clock, range_check="off"
+    )
+    results = fs.solve(fs.Model("", [bar(), *pins, force]))
+    assert results.balances == ()
+    assert abs(results["force"].twist[0]) < 1e-18
+
+
+@pytest.mark.parametrize("clock", ["12 o'clock", "6 o'clock"])
+def test_a_mass_that_hangs_straight_down_is_no_torque(clock):
+    pins = [fs.Pin("one", at="0 mm", holds=["radial", "axial"]), fs.Pin("two", at="200 mm", holds=["radial"])]
+    mass = fs.Mass("mass", at="80 mm", mass="5 kg", cg_radius="40 mm", cg_angle=clock)
+    assert fs.solve(fs.Model("", [bar(), *pins, mass], gravity="down"))["mass"].up[0] < 0
+
+
 def test_balanced_torques_need_no_note():
     assert fs.solve(layshaft(gravity=None)).balances == ()
 

@@ -8,7 +8,7 @@ from fe_shaft.fem import assembly, linear, system
 from fe_shaft.fem.assembly import Constraint, Springs, reduce
 from fe_shaft.fem.frames import rigid_link
 from fe_shaft.fem.linear import solve
-from fe_shaft.fem.span import end_load, gather_uniform, load_deformation
+from fe_shaft.fem.span import end_loads, gather_uniform, load_deformation
 from fe_shaft.fem.system import Network
 from tests.fem.chains import E, G, chain, condensed
 
@@ -135,7 +135,7 @@ def test_a_uniform_load_on_the_spans(way):
     density = np.zeros((2, 6, 1))
     density[:, UY] = -700.0
     nodal = np.zeros((3, 6, 1))
-    nodal[1:] += end_load(load, pieces) @ density
+    nodal[1:] += end_loads(load, pieces)[1] @ density
     solution = solve(net, nodal, load_deformation(pieces, net.spans, load) @ density)
     assert solution.u[1, UY, 0] == pytest.approx(-5 * 700 * 0.5**4 / (384 * E * INERTIA), rel=1e-12)
     np.testing.assert_allclose(solution.unbalanced[[0, 2], UY, 0], 175, rtol=1e-12)

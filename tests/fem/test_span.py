@@ -8,7 +8,7 @@ from fe_shaft.fem.span import (
     Recovery,
     condense,
     deformation_matrices,
-    end_load,
+    end_loads,
     flexibility,
     gather_mass,
     gather_uniform,
@@ -69,7 +69,7 @@ def cantilever(pieces, load=None, density=None, tip=None):
     loads, e_load = (), 0.0
     if load is not None:
         gathered, density = load(pieces), np.asarray(density, float)
-        total = total + (end_load(gathered, pieces) @ density)[0]
+        total = total + (end_loads(gathered, pieces)[1] @ density)[0]
         e_load = load_deformation(pieces, spans, gathered)[0] @ density
         loads = ((gathered, density[None, :, None]),)
     s = total.copy()
