@@ -40,6 +40,7 @@ class HeadingWords(TypedDict, total=False):
     gravity: Literal["down"] | Sequence[Number]
     units: Any
     housing: Any
+    shoulders: Literal["on", "off"]
     estimates: Any
 
 
