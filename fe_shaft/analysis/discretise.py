@@ -14,7 +14,8 @@ from typing import TYPE_CHECKING, Any, NamedTuple
 import numpy as np
 from numpy.typing import NDArray
 
-from fe_shaft.fem.pieces import CONE_RATIO, Pieces, Sections
+from fe_shaft.analysis.shouldering import lumps_in_pieces, no_lumps
+from fe_shaft.fem.pieces import CONE_RATIO, Lumps, Pieces, Sections
 
 if TYPE_CHECKING:
     from fe_shaft.model.actions import Action
@@ -157,9 +158,7 @@ def _join(model: Model, laid: list[_Laid]) -> Grid:
         left=left,
         right=right,
         length=x[right] - x[left],
-        pieces=_pieces(
-            [model.segment_arrays[name] for name in shafts], laid, x[left], pieces, _hanging(model, shafts, node_of)
-        ),
+        pieces=_pieces(model, laid, x[left], pieces, _hanging(model, shafts, node_of)),
         shafts=shafts,
         node_of=node_of,
     )
@@ -192,9 +191,8 @@ def _cat(arrays: list[NDArray[Any]]) -> NDArray[Any]:
     return arrays[0] if len(arrays) == 1 else np.concatenate(arrays)
 
 
-def _pieces(
-    arrays: list[SegmentArrays], laid: list[_Laid], span_left: Array, n_pieces: int, hanging: tuple[int, ...]
-) -> Pieces:
+def _pieces(model: Model, laid: list[_Laid], span_left: Array, n_pieces: int, hanging: tuple[int, ...]) -> Pieces:
+    arrays = [model.segment_arrays[shaft.name] for shaft in model.shafts]
     shifts = accumulate((len(part.segment) for part in laid), initial=0)
     starts = _cat([_shifted(part.station[:-1], shift) for part, shift in zip(laid, shifts, strict=False)])
     counts = np.concatenate([starts[1:], [n_pieces]]) - starts
@@ -215,7 +213,17 @@ def _pieces(
         share_right=shares[1],
         chains=tuple(accumulate(len(part.segment) for part in laid[:-1])),
         hanging=hanging,
+        lumps=_shoulders(arrays, laid) if model.shoulders == "on" else None,
     )
+
+
+def _shoulders(arrays: list[SegmentArrays], laid: list[_Laid]) -> Lumps | None:
+    """The shoulders of all shafts, in the pieces where they act."""
+    each = [lumps_in_pieces(a, part.ends, part.segment) for a, part in zip(arrays, laid, strict=True)]
+    if all(lumps is None for lumps in each):
+        return None
+    filled = [no_lumps(len(part.segment)) if own is None else own for own, part in zip(each, laid, strict=True)]
+    return filled[0] if len(filled) == 1 else Lumps(*(np.concatenate(of, axis=1) for of in zip(*filled, strict=True)))
 
 
 def _shifted(numbers: Ints, shift: int) -> Ints:

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from dataclasses import dataclass
 from functools import cached_property
+from typing import NamedTuple
 
 import numpy as np
 from numpy.typing import NDArray
@@ -90,6 +91,30 @@ class Points:
     bending: Array
 
 
+class Lumps(NamedTuple):
+    """Flexibility that sits at points of the pieces, on top of their sections: shoulders. (r, m) each.
+
+    Attributes
+    ----------
+    eta : [m], from the piece's left end
+    axial, torsion, shear, bending : [m/N, rad/(N m), m/N, rad/(N m)]
+    """
+
+    eta: Array
+    axial: Array
+    torsion: Array
+    shear: Array
+    bending: Array
+
+    def cut(self, pieces: Ints, length: Array) -> Lumps:
+        """Of pieces that are cut at a distance from their left ends: what lies before the cut.
+
+        Cut at the left end itself, a piece has none: there a place lies before the shoulder.
+        """
+        before = (self.eta[:, pieces] < length) & (length > np.finfo(float).tiny)
+        return Lumps(self.eta[:, pieces], *(of[:, pieces] * before for of in self[1:]))
+
+
 @dataclass(frozen=True)
 class Pieces:
     """Cylinders and cones between neighbouring grid stations, span after span, left to right.
@@ -106,6 +131,7 @@ class Pieces:
         Where in its segment a piece begins and ends, 0 to 1; None without cones.
     chains : first piece of each further chain of spans (a model's other shafts)
     hanging : spans beyond their chain's last support: loads gather from their free right ends
+    lumps : of the shoulders, None without any
     """
 
     starts: Ints
@@ -118,6 +144,7 @@ class Pieces:
     share_right: Array | None = None
     chains: tuple[int, ...] = ()
     hanging: tuple[int, ...] = ()
+    lumps: Lumps | None = None
 
     @property
     def tapered(self) -> bool:
@@ -186,7 +213,12 @@ class Pieces:
             of = self.sections
             per_segment = (of.youngs_modulus, of.shear_modulus, of.poisson_ratio, of.shear_coefficient)
             rates = _rates(diameter, bore, *(self._of_segment(values) for values in per_segment))
-        return Points(eta, *(rates * weight))
+        own = Points(eta, *(rates * weight))
+        if self.lumps is None:
+            return own
+        lumps = Points(*self.lumps)
+        pairs = [(getattr(own, name), getattr(lumps, name)) for name in Points.__dataclass_fields__]
+        return Points(*(np.concatenate(pair) for pair in pairs))
 
 
 def stretch(of_spans: Array, pieces: Pieces) -> Array:

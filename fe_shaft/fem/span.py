@@ -30,7 +30,7 @@ import numpy as np
 from numpy.typing import NDArray
 
 from fe_shaft.fem.dofs import NDOF
-from fe_shaft.fem.pieces import Pieces, Points, stretch, sums_before
+from fe_shaft.fem.pieces import Lumps, Pieces, Points, stretch, sums_before
 
 Array = NDArray[np.float64]
 Ints = NDArray[np.intp]
@@ -72,16 +72,32 @@ class Spans(NamedTuple):
 def flexibility(pieces: Pieces) -> Flexibility:
     """Integrate the flexibility of every piece: cylinders in closed form, cones at their Gauss points."""
     length = pieces.length
-    if not pieces.tapered:
-        rate = pieces.sections.flexibility_rates.take(pieces.segment, axis=1)
-        axial, torsion, shear, bending = rate * length
-        return Flexibility(axial, torsion, shear, bending, length / 2, bending * (length * length / 12))
-    points = pieces.points
-    bending = points.bending.sum(axis=0)
-    centre = (points.bending * points.eta).sum(axis=0) / bending
-    own = (points.bending * (points.eta - centre) ** 2).sum(axis=0)
-    axial, torsion, shear = (part.sum(axis=0) for part in (points.axial, points.torsion, points.shear))
-    return Flexibility(axial, torsion, shear, bending, centre, own)
+    if pieces.tapered:
+        points = pieces.points
+        bending = points.bending.sum(axis=0)
+        centre = (points.bending * points.eta).sum(axis=0) / bending
+        own = (points.bending * (points.eta - centre) ** 2).sum(axis=0)
+        axial, torsion, shear = (part.sum(axis=0) for part in (points.axial, points.torsion, points.shear))
+        return Flexibility(axial, torsion, shear, bending, centre, own)
+    rate = pieces.sections.flexibility_rates.take(pieces.segment, axis=1)
+    axial, torsion, shear, bending = rate * length
+    plain = Flexibility(axial, torsion, shear, bending, length / 2, bending * (length * length / 12))
+    return plain if pieces.lumps is None else _with_lumps(plain, pieces.lumps)
+
+
+def _with_lumps(plain: Flexibility, lumps: Lumps) -> Flexibility:
+    """Pieces with the shoulders that sit in them: all about their common elastic centres."""
+    bending = plain.bending + lumps.bending.sum(axis=0)
+    centre = (plain.bending * plain.centre + (lumps.bending * lumps.eta).sum(axis=0)) / bending
+    moved = plain.bending * (plain.centre - centre) ** 2 + (lumps.bending * (lumps.eta - centre) ** 2).sum(axis=0)
+    return Flexibility(
+        axial=plain.axial + lumps.axial.sum(axis=0),
+        torsion=plain.torsion + lumps.torsion.sum(axis=0),
+        shear=plain.shear + lumps.shear.sum(axis=0),
+        bending=bending,
+        centre=centre,
+        own=plain.own + moved,
+    )
 
 
 def condense(pieces: Pieces, give: Flexibility, length: Array) -> Spans:

@@ -5,7 +5,7 @@ from typing import Annotated
 from pydantic import Field
 
 from fe_shaft.model.housing import Estimates, Housing, OutputUnits
-from fe_shaft.model.kinds import Count, Text
+from fe_shaft.model.kinds import Choice, Count, Text
 from fe_shaft.model.quantity import Acceleration
 from fe_shaft.model.shaft import Vector
 from fe_shaft.model.words import Words
@@ -36,6 +36,11 @@ class Heading(Words):
     )
     housing: Housing | None = Field(
         default=None, description="The housing.", examples=[{"seat": {"radial": "~400 N/um"}}]
+    )
+    shoulders: Annotated[str, Choice("on", "off")] = Field(
+        default="off",
+        description="`on`: shoulders make the shafts softer, by a rule made for this project; `off`: the plain beam.",
+        examples=["on"],
     )
     estimates: Estimates = Field(
         default_factory=Estimates, description="How estimates are varied.", examples=[{"together": True}]

@@ -40,6 +40,7 @@ class HeadingWords(TypedDict, total=False):
     gravity: Literal["down"] | Sequence[Number]
     units: Any
     housing: Any
+    shoulders: Literal["on", "off"]
     estimates: Any
 
 
@@ -263,9 +264,7 @@ class CaseWords(TypedDict, total=False):
     power: Number
     torque: Number
     speed: Number
-    turns: Literal[
-        "clockwise from left", "counterclockwise from left", "clockwise from right", "counterclockwise from right"
-    ]
+    turns: Literal["clockwise from left", "counterclockwise from left", "clockwise from right", "counterclockwise from right"]
     of_shaft: str
     torque_factor: float
     coasts: bool
@@ -279,9 +278,7 @@ class LimitWords(TypedDict, total=False):
     range_check: Literal["off"]
     source: str
     of: Required[str | Sequence[str]]
-    quantity: Required[
-        Literal["deflection", "up", "front", "axial", "separation", "tangential", "slope", "tilt", "twist", "force"]
-    ]
+    quantity: Required[Literal["deflection", "up", "front", "axial", "separation", "tangential", "slope", "tilt", "twist", "force"]]
     max: Number
     min: Number
     counting: Literal["everything"]
@@ -381,3 +378,4 @@ class OutputUnitsWords(TypedDict, total=False):
     length: Literal["m", "mm", "cm", "um", "nm", "in", "ft", "mil"]
     angle: Literal["rad", "mrad", "urad", "deg", "arcmin", "arcsec"]
     stress: Literal["Pa", "kPa", "MPa", "GPa", "psi", "ksi"]
+

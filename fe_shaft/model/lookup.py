@@ -67,6 +67,11 @@ class Lookup:
         return self.heading.housing
 
     @property
+    def shoulders(self) -> str:
+        """Whether shoulders make the shafts softer: "on" or "off"."""
+        return self.heading.shoulders
+
+    @property
     def estimates(self) -> Estimates:
         """How estimates are varied."""
         return self.heading.estimates

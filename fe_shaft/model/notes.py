@@ -13,6 +13,7 @@ from fe_shaft.model.gear import PRESSURE_ANGLE, Gear
 from fe_shaft.model.loads import Pulley, Sprocket
 from fe_shaft.model.part import Heavy
 from fe_shaft.model.quantity import Quantity
+from fe_shaft.model.shaft import Shaft
 from fe_shaft.model.support import Bearing, Support
 from fe_shaft.model.words import Words
 from fe_shaft.units import Value, show
@@ -62,6 +63,11 @@ def _defaults(model: Model) -> Iterator[Note]:
     default = [shaft.name for shaft in model.shafts if "shear" not in shaft.given]
     if default:
         yield Note(f"{default[0]}.shear", "shear: Cowper")
+    if any(_is_stepped(shaft) for shaft in model.shafts):
+        softer = "shoulders make the shafts softer, by a rule made for this project"
+        yield Note(
+            "shoulders", softer if model.shoulders == "on" else "shoulders carry to their rims, as in a plain beam"
+        )
     plain = [gear.name for gear in model.gears if "pressure_angle" not in gear.given]
     if plain:
         yield Note(f"{plain[0]}.pressure_angle", f"pressure_angle {PRESSURE_ANGLE} (ISO 53): {_names(plain)}")
@@ -76,6 +82,11 @@ def _defaults(model: Model) -> Iterator[Note]:
             yield Note(f"{wheel.name}.pull_factor", f"pull_factor 1: {wheel.name}")
     if any(case.enters_shares and case.leaves_shares for case in model.cases):
         yield Note("efficiency", "efficiency 1")
+
+
+def _is_stepped(shaft: Shaft) -> bool:
+    numbers = shaft.numbers
+    return any(np.any(numbers[f"{what}_right"][:-1] != numbers[f"{what}_left"][1:]) for what in ("diameter", "bore"))
 
 
 def _weights(model: Model) -> Iterator[Note]:

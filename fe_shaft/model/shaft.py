@@ -1,7 +1,7 @@
 """A shaft: its segments from left to right, its material, and where it stands in the model."""
 
 from collections.abc import Iterator, Mapping, Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 from functools import cached_property
 from typing import TYPE_CHECKING, Annotated, Any, ClassVar, Unpack
 
@@ -41,6 +41,9 @@ class SegmentArrays:
         0 where the material states none (allowed without gravity only).
     shear_coefficient : (n_segments,)
         NaN: by Cowper from section and Poisson's ratio; inf: no shear deformation.
+    fillet_left, fillet_right : (n_segments,) [m]
+        Fillets at the segments' ends; one counts where its segment is the thinner one.
+    memo : what follows from the geometry alone and is kept for all models that share it
     """
 
     length: Array
@@ -53,6 +56,9 @@ class SegmentArrays:
     poisson_ratio: Array
     density: Array
     shear_coefficient: Array
+    fillet_left: Array
+    fillet_right: Array
+    memo: dict[str, Any] = field(default_factory=dict, compare=False, repr=False)
 
     @cached_property
     def uniform(self) -> bool:
@@ -219,6 +225,14 @@ class Shaft(Named):
         """Number of each named segment, counted from 0."""
         return {segment.name: index for index, segment in enumerate(self.segments or ()) if segment.name}
 
+    @property
+    def _fillets(self) -> dict[str, Array]:
+        """Fillets at both ends of the segments (n_segments,) [m]."""
+        return {
+            "fillet_left": np.array([_size(row.fillet_left, row.fillet) for row in self.segments]),
+            "fillet_right": np.array([_size(row.fillet_right, row.fillet) for row in self.segments]),
+        }
+
     def arrays(self, materials: Mapping[str, Material]) -> SegmentArrays:
         """The shaft in numbers.
 
@@ -235,10 +249,15 @@ class Shaft(Named):
         shear = [_SHEAR.get(each, each) for each in (segment.shear or self.shear for segment in self.segments)]
         young, stiff, ratio, density = np.ascontiguousarray(rows.T)
         columns = {"youngs_modulus": young, "shear_modulus": stiff, "poisson_ratio": ratio, "density": density}
-        made = {**self.numbers, **columns, "shear_coefficient": np.array(shear, dtype=float)}
+        made = {**self.numbers, **columns, "shear_coefficient": np.array(shear, dtype=float), **self._fillets}
         for column in made.values():
             column.setflags(write=False)
         return SegmentArrays(**made)
+
+
+def _size(value: Value | None, default: Value | None) -> float:
+    chosen = default if value is None else value
+    return 0.0 if chosen is None else chosen.si
 
 
 def running_sums(values: Array) -> Array:

@@ -41,7 +41,6 @@ LATER: dict[str, dict[str, str]] = {
         "sweeps": "Change one value at a time with --set, or write a variant with extends.",
     },
     "Shaft": {
-        "shoulders": "Shoulders are not made softer here: the plain beam is computed.",
         "beside": 'Write left_end = ["0 mm", "0 mm", "112 mm"].',
         "distance": 'Write left_end = ["0 mm", "0 mm", "112 mm"].',
         "angle": 'Write left_end = ["0 mm", "0 mm", "112 mm"].',

@@ -159,8 +159,10 @@ class Line:
         whole, piece = self.found.pieces, k + self.own.start
         own = np.arange(len(k))
         length = np.maximum(length, np.finfo(float).tiny)
-        shares: tuple[Array, Array] | tuple[None, None] = (None, None)
+        shares: tuple[Array | None, Array | None] = (None, None)
         if whole.share_left is not None and whole.share_right is not None:
             begin, finish = whole.share_left[piece], whole.share_right[piece]
             shares = (begin, begin + (finish - begin) * (length / whole.length[piece]))
-        return Pieces(own, np.ones_like(own), 0.0 * length, length, whole.segment[piece], whole.sections, *shares)
+        lumps = None if whole.lumps is None else whole.lumps.cut(piece, length)
+        segment, zero, one = whole.segment[piece], 0.0 * length, np.ones_like(own)
+        return Pieces(own, one, zero, length, segment, whole.sections, shares[0], shares[1], lumps=lumps)

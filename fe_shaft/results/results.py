@@ -53,7 +53,7 @@ class Results:
     parts : every part on a shaft, by name
     actions : what the parts do to their shafts
     proof : equilibrium, energy, residual, digits
-    balances : torques that were taken out so that shafts balance
+    balances : what the solution adds to the model's notes: torques taken out, shoulders beyond their rule
     verdicts : of the model's limits
     """
 

@@ -84,7 +84,7 @@ def test_nothing_can_be_changed_afterwards() -> None:
         (
             {"colour": "red"},
             "colour",
-            "colour is not a key here. Keys: format, title, question, gravity, units, housing, estimates.",
+            "colour is not a key here. Keys: format, title, question, gravity, units, housing, shoulders, estimates.",
         ),
         (
             {"units": {"length": "parsec"}},

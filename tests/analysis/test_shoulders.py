@@ -1,0 +1,98 @@
+"""Shoulders in the solution: on and off, where they sit, what is said of them."""
+
+import numpy as np
+import pytest
+
+import fe_shaft as fs
+from fe_shaft.analysis.recovery import solve_once
+from fe_shaft.fem.shoulders import Contour, shoulder_lumps
+
+E, G = 210e9, 81e9  # 42CrMo4 of the built-in list
+
+
+def cantilever(segments, loads, **words):
+    clamp = fs.Pin("clamp", at="0 mm", holds=["radial", "axial", "tilt", "spin"])
+    shaft = fs.Shaft("shaft", segments, material="42CrMo4")
+    return fs.Model("cantilever", [shaft, clamp, *loads], **words)
+
+
+STEPPED = [
+    fs.Segment("thick", length="60 mm", diameter="50 mm"),
+    fs.Segment("thin", length="80 mm", diameter="30 mm", fillet="2 mm"),
+]
+TIP = fs.Force("tip", at="140 mm", couple={"front": "100 N m", "axial": "50 N m"}, axial="2 kN")
+
+
+def test_the_plain_beam_is_the_default_and_says_so():
+    model = cantilever(STEPPED, [TIP])
+    assert model.shoulders == "off"
+    assert any("carry to their rims" in note.sentence for note in model.notes)
+    smooth = cantilever([fs.Segment("one", length="140 mm", diameter="30 mm")], [TIP])
+    assert not any(note.key == "shoulders" for note in smooth.notes)
+
+
+def test_a_shoulder_adds_exactly_its_lumps():
+    """Under pure moment, torque and axial force a cantilever's tip moves by the lumps times the load (unit load)."""
+    off = fs.solve(cantilever(STEPPED, [TIP])).case()["tip"]
+    on = fs.solve(cantilever(STEPPED, [TIP], shoulders="on")).case()["tip"]
+    lumps = shoulder_lumps(Contour.of([0.06, 0.08], [0.05, 0.03], fillet_left=[0, 0.002], fillet_right=[0, 0.002]))
+    assert on.u[5] - off.u[5] == pytest.approx(100 * lumps.bending.sum() / E, rel=1e-9)
+    assert on.u[3] - off.u[3] == pytest.approx(50 * lumps.torsion.sum() / G, rel=1e-9)
+    assert on.u[0] - off.u[0] == pytest.approx(2000 * lumps.axial.sum() / E, rel=1e-9)
+    levers = 0.140 - lumps.bending_place
+    assert on.u[1] - off.u[1] == pytest.approx(100 * (lumps.bending * levers).sum() / E, rel=1e-9)
+
+
+def test_cutting_a_segment_or_adding_stations_changes_nothing():
+    cut = [
+        fs.Segment("thick", length="60 mm", diameter="50 mm"),
+        fs.Segment("thin", length="1 mm", diameter="30 mm", fillet="2 mm"),
+        fs.Segment("rest", length="79 mm", diameter="30 mm", fillet="2 mm"),
+    ]
+    loads = [TIP, fs.Force("spread", at="70 mm", up="-3 kN", front="1 kN", spread="40 mm")]
+    one = fs.solve(cantilever(STEPPED, loads, shoulders="on", gravity="down"))
+    two = fs.solve(cantilever(cut, loads, shoulders="on", gravity="down"))
+    marks = [fs.Force(f"mark_{x}", at=f"{x} mm", up="0 N") for x in (58, 60, 61, 62, 64, 100)]
+    three = fs.solve(cantilever(STEPPED, [*loads, *marks], shoulders="on", gravity="down"))
+    for other in (two, three):
+        np.testing.assert_allclose(other["tip"].u, one["tip"].u, rtol=1e-11)
+    for mark in marks:
+        u, _ = one.lines["shaft"].at(three.model.places[mark.name].x)
+        np.testing.assert_allclose(three[mark.name].u, u[:, 0], rtol=1e-9, atol=1e-18)
+    assert max(r.proof.worst for r in (one, two, three)) < 1e-13
+
+
+def test_without_shear_there_is_no_shear_lump():
+    force = fs.Force("tip", at="140 mm", up="1 kN")
+    segments = [fs.Segment(s.name, length=s.length.text, diameter=s.diameter.text, shear="none") for s in STEPPED]
+    lumps = shoulder_lumps(Contour.of([0.06, 0.08], [0.05, 0.03]))
+    off = fs.solve(cantilever(segments, [force])).case()["tip"].up
+    on = fs.solve(cantilever(segments, [force], shoulders="on")).case()["tip"].up
+    levers = 0.140 - lumps.bending_place
+    assert on - off == pytest.approx(1000 * (lumps.bending * levers**2).sum() / E, rel=1e-9)
+
+
+def test_what_leaves_the_range_of_the_rule_is_told():
+    disc = [*STEPPED, fs.Segment("disc", length="4 mm", diameter="120 mm")]
+    results = fs.solve(cantilever(disc, [TIP], shoulders="on"))
+    told = [note.sentence for note in results.notes if note.key == "shoulders"]
+    assert any("shaft.thin" in sentence and "thin disc" in sentence for sentence in told)
+    assert any("D/d = 3" in sentence for sentence in told)
+    assert not any("shaft." in note.sentence for note in fs.solve(cantilever(STEPPED, [TIP], shoulders="on")).notes)
+
+
+def test_the_rule_is_worked_out_once_for_all_models_of_one_geometry():
+    model = cantilever(STEPPED, [TIP], shoulders="on")
+    solve_once(model)
+    arrays = model.segment_arrays["shaft"]
+    assert model.pinned().segment_arrays["shaft"].memo["shoulders"] is arrays.memo["shoulders"]
+
+
+def test_shoulders_are_reached_from_file_and_command_line(tmp_path, capsys):
+    from fe_shaft.cli import main
+
+    path = tmp_path / "shaft.toml"
+    fs.write(cantilever(STEPPED, [TIP], shoulders="on"), path)
+    assert fs.read(path).shoulders == "on"
+    assert main(["compare", str(path), str(path), "--set", "shoulders=off"]) == 0
+    assert "shoulders: on -> off" in capsys.readouterr().out
