@@ -264,7 +264,9 @@ class CaseWords(TypedDict, total=False):
     power: Number
     torque: Number
     speed: Number
-    turns: Literal["clockwise from left", "counterclockwise from left", "clockwise from right", "counterclockwise from right"]
+    turns: Literal[
+        "clockwise from left", "counterclockwise from left", "clockwise from right", "counterclockwise from right"
+    ]
     of_shaft: str
     torque_factor: float
     coasts: bool
@@ -278,7 +280,9 @@ class LimitWords(TypedDict, total=False):
     range_check: Literal["off"]
     source: str
     of: Required[str | Sequence[str]]
-    quantity: Required[Literal["deflection", "up", "front", "axial", "separation", "tangential", "slope", "tilt", "twist", "force"]]
+    quantity: Required[
+        Literal["deflection", "up", "front", "axial", "separation", "tangential", "slope", "tilt", "twist", "force"]
+    ]
     max: Number
     min: Number
     counting: Literal["everything"]
@@ -378,4 +382,3 @@ class OutputUnitsWords(TypedDict, total=False):
     length: Literal["m", "mm", "cm", "um", "nm", "in", "ft", "mil"]
     angle: Literal["rad", "mrad", "urad", "deg", "arcmin", "arcsec"]
     stress: Literal["Pa", "kPa", "MPa", "GPa", "psi", "ksi"]
-

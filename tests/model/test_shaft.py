@@ -133,7 +133,8 @@ def test_tolerance_classes_keep_the_nominal_value_and_the_text() -> None:
         (
             {"shoulders": "off"},
             "s.shoulders",
-            "shoulders is not a key here. Keys: segments, material, shear, left_end, axis, twelve, segments_file, label.",
+            "shoulders is not a key here. "
+            "Keys: segments, material, shear, left_end, axis, twelve, segments_file, label.",
         ),
         (
             {"beside": "layshaft"},
