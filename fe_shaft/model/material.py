@@ -85,6 +85,9 @@ _BUILT_IN: dict[str, tuple[float, float | None, float, float, float | None, str]
     **dict.fromkeys(
         ("42CrMo4", "16MnCr5", "18CrNiMo7-6", "C45", "34CrNiMo6"), (210, 81, 0.3, 7850, 11.5, _PRACTICE)
     ),
+    **dict.fromkeys(
+        ("S235", "S355"), (210, 81, 0.3, 7850, 12, "EN 1993-1-1, 3.2.6, density EN 1991-1-1; from memory")
+    ),
     "100Cr6": (210, 81, 0.3, 7830, 11.9, _PRACTICE),
     "steel": (207, 79.3, 0.292, 7801, None, f"{_SHIGLEY}: carbon steel"),
     "nickel steel": (207, 79.3, 0.291, 7750, None, f"{_SHIGLEY}: nickel steel"),

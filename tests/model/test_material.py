@@ -74,3 +74,13 @@ def test_shaft_steels_are_marked_from_memory() -> None:
 
 def test_unknown_is_none() -> None:
     assert built_in("unobtainium") is None
+
+
+def test_structural_steels_have_the_figures_of_the_eurocode() -> None:
+    """EN 1993-1-1, 3.2.6: E 210 GPa, G about 81 GPa, nu 0.3, 12e-6/K; from memory."""
+    for name in ("S235", "S355"):
+        steel = built_in(name)
+        assert steel is not None
+        assert steel.elastic == (210e9, 81e9, 0.3)
+        assert steel.thermal_expansion is not None
+        assert steel.thermal_expansion.si == pytest.approx(12e-6)
