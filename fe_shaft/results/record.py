@@ -13,6 +13,7 @@ import numpy as np
 
 from fe_shaft.model.groups import noun
 from fe_shaft.results.quantity import QUANTITIES
+from fe_shaft.results.words.doubts import too_far
 from fe_shaft.version import VERSION as PROGRAM
 
 if TYPE_CHECKING:
@@ -48,6 +49,7 @@ def results_record(results: Results) -> dict[str, Any]:
         "shafts": {name: _shaft(results, name) for name in results.lines},
         "loads": [_load(action) for action in results.actions],
         "verdicts": [_verdict(verdict) for verdict in results.verdicts],
+        "doubts": list(too_far(results, "mrad", "um", {name: name for name in results.lines})),
         "notes": [{"key": note.key, "sentence": note.sentence} for note in results.notes],
         "proof": _proof(results),
     }

@@ -88,9 +88,21 @@ RESULTS = {
                 "required": ["limit", "word", "part", "quantity", "case", "value", "use", "source", "band"],
             },
         },
+        "doubts": {"type": "array", "items": {"type": "string"}},
         "notes": {"type": "array", "items": NOTE},
     },
-    "required": [*head("results"), "model", "cases", "parts", "shafts", "loads", "verdicts", "notes", "proof"],
+    "required": [
+        *head("results"),
+        "model",
+        "cases",
+        "parts",
+        "shafts",
+        "loads",
+        "verdicts",
+        "doubts",
+        "notes",
+        "proof",
+    ],
 }
 COMPARISON = {
     "type": "object",

@@ -45,7 +45,7 @@ def test_every_model_gives_strict_json(name):
 
 def test_keys_are_stable(record):
     """A change here breaks readers of results.json: raise the version with it."""
-    keys = "format version program units model cases parts shafts loads verdicts notes proof"
+    keys = "format version program units model cases parts shafts loads verdicts doubts notes proof"
     assert list(record) == keys.split()
     assert record["format"] == "fe_shaft results"
     assert record["version"] == 1
@@ -123,3 +123,13 @@ def test_comparison_record():
 
 def row_of(record: dict, part: str, quantity: str) -> dict:
     return next(row for row in record["rows"] if (row["part"], row["quantity"]) == (part, quantity))
+
+
+def test_doubts_are_in_the_record_too():
+    """A cantilever far too soft for small movements."""
+    shaft = fs.Shaft("rod", [fs.Segment(length="1 m", diameter="5 mm")], material="steel")
+    clamp = fs.Pin("clamp", at="0 mm", holds=["radial", "axial", "tilt", "spin"])
+    model = fs.Model("soft", [shaft, clamp, fs.Force("load", at="1 m", up="100 N")])
+    (doubt,) = results_record(fs.solve(model))["doubts"]
+    assert doubt.startswith("rod slopes ")
+    assert "too far for small movements" in doubt

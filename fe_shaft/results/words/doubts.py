@@ -2,13 +2,14 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator
+from collections.abc import Iterator, Mapping
 from typing import TYPE_CHECKING
 
 from fe_shaft.results.words.layout import labelled
 from fe_shaft.units import show
 
 if TYPE_CHECKING:
+    from fe_shaft.results.results import Results
     from fe_shaft.results.words.page import Page
 
 LARGE_SLOPE = 0.1  # rad: sine and angle differ by 0.2 %, cosine and 1 by 0.5 %
@@ -17,18 +18,20 @@ LARGE_DEFLECTION = 0.1  # of the shaft's length
 
 def doubts(page: Page) -> list[str]:
     """Shafts that move too far, in any case, for small movements to be assumed; nothing for all others."""
-    found = list(_too_far(page))
+    names = page.names(40)
+    shown = {shaft: names[shaft] for shaft in page.results.lines}
+    found = list(too_far(page.results, page.shown.angle, page.shown.length, shown))
     return labelled("Doubt    ", found) if found else []
 
 
-def _too_far(page: Page) -> Iterator[str]:
-    for shaft, line in page.results.lines.items():
+def too_far(results: Results, angle: str, length: str, names: Mapping[str, str]) -> Iterator[str]:
+    """One sentence a shaft that moves too far, in units of choice; `names` says what shafts are called in print."""
+    for shaft, line in results.lines.items():
         slope, deflection = float(line.slope.max()), float(line.deflection.max())
         if slope > LARGE_SLOPE:
-            moved = f"slopes {show(slope, page.shown.angle)}"
+            moved = f"slopes {show(slope, angle)}"
         elif deflection > LARGE_DEFLECTION * line.length:
-            moved = f"deflects {show(deflection, page.shown.length)}"
+            moved = f"deflects {show(deflection, length)}"
         else:
             continue
-        name = page.names(40)[shaft]
-        yield f"{name} {moved}: too far for small movements, which are assumed. Look at its supports and loads."
+        yield f"{names[shaft]} {moved}: too far for small movements, which are assumed. Look at its supports and loads."
