@@ -240,3 +240,17 @@ def sums_before(steps: Array, pieces: Pieces, out: Array | None = None) -> Array
         before[..., first] = 0.0
         np.add.accumulate(steps[..., first : last - 1], axis=-1, out=before[..., first + 1 : last])
     return before
+
+
+def sums_in_spans(steps: Array, pieces: Pieces) -> Array:
+    """Sums of the steps to the left of each piece within its span, (m,), to the rounding of each sum itself.
+
+    One running sum over everything, with its rounding errors beside it, so that the difference of two large sums keeps
+    the digits of a small one ("Sum2" of Ogita, Rump and Oishi, 2005, SIAM J. Sci. Comput. 26).
+    """
+    sums = np.concatenate([[0.0], np.cumsum(steps)])
+    before, after = sums[:-1], sums[1:]
+    added = after - before
+    missed = np.concatenate([[0.0], np.cumsum((before - (after - added)) + (steps - added))[:-1]])
+    large, small = (part - stretch(part[pieces.starts], pieces) for part in (before, missed))
+    return large + small

@@ -30,7 +30,7 @@ import numpy as np
 from numpy.typing import NDArray
 
 from fe_shaft.fem.dofs import NDOF
-from fe_shaft.fem.pieces import Lumps, Pieces, Points, stretch, sums_before
+from fe_shaft.fem.pieces import Lumps, Pieces, Points, stretch, sums_before, sums_in_spans
 
 Array = NDArray[np.float64]
 Ints = NDArray[np.intp]
@@ -186,9 +186,8 @@ def _gather(pieces: Pieces, inside: Inside) -> Gathered:
 
 
 def _run(steps: Array, pieces: Pieces) -> tuple[Array, Array]:
-    """Running sums along the last axis that start anew in each span: value left and right of each piece."""
-    before = sums_before(steps, pieces)
-    before -= stretch(before[..., pieces.starts], pieces)
+    """Running sums that start anew in each span: value left and right of each piece."""
+    before = sums_in_spans(steps, pieces)
     return before, before + steps
 
 
