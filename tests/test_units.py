@@ -11,7 +11,7 @@ from typing import Any
 import numpy as np
 import pint
 import pytest
-from hypothesis import given
+from hypothesis import example, given
 from hypothesis import strategies as st
 
 from fe_shaft.units import (
@@ -457,6 +457,7 @@ def test_what_is_written_is_read_back(number: float, listed: tuple[str, str]) ->
     st.floats(min_value=1.0, max_value=1e3),
     st.sampled_from([each for each in LISTED if "temperature" not in each[0]]),
 )
+@example(0.29364928835662335, 0.0, 1.0, ("tilt_stiffness", "N m/deg"))  # an end at the value itself, a float beside it
 def test_bands_are_written_and_read_back(number: float, down: float, up: float, listed: tuple[str, str]) -> None:
     dimension, unit = listed
     si = parse(f"{number!r} {unit}", dimension).si

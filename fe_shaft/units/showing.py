@@ -36,8 +36,17 @@ def exact(si: float, unit: Unit) -> str:
     """The shortest text that is read as this very value, or as near as floats allow."""
     number = unit.from_si(si)
     texts = [f"{number:.{digits}g}" for digits in (12, 15, 16, 17)]
-    text = next((text for text in texts if unit.to_si(float(text)) == si), texts[-1])
+    texts += [
+        f"{near:.17g}" for near in _neighbours(number)
+    ]  # division may land a step beside the number that was read
+    text = min(texts, key=lambda text: abs(unit.to_si(float(text)) - si))
     return f"{text} {unit.text}".rstrip()
+
+
+def _neighbours(number: float) -> list[float]:
+    """The two floats next to a number on either side."""
+    above, below = math.nextafter(number, math.inf), math.nextafter(number, -math.inf)
+    return [below, above, math.nextafter(below, -math.inf), math.nextafter(above, math.inf)]
 
 
 def plain(number: float) -> str:
