@@ -15,7 +15,7 @@ import numpy as np
 from numpy.typing import NDArray
 
 from fe_shaft.analysis.shouldering import lumps_in_pieces, no_lumps
-from fe_shaft.fem.pieces import CONE_RATIO, Lumps, Pieces, Sections
+from fe_shaft.fem.pieces import CONE_RATIO, Pieces, Points, Sections
 
 if TYPE_CHECKING:
     from fe_shaft.model.actions import Action
@@ -217,13 +217,13 @@ def _pieces(model: Model, laid: list[_Laid], span_left: Array, n_pieces: int, ha
     )
 
 
-def _shoulders(arrays: list[SegmentArrays], laid: list[_Laid]) -> Lumps | None:
+def _shoulders(arrays: list[SegmentArrays], laid: list[_Laid]) -> Points | None:
     """The shoulders of all shafts, in the pieces where they act."""
     each = [lumps_in_pieces(a, part.ends, part.segment) for a, part in zip(arrays, laid, strict=True)]
     if all(lumps is None for lumps in each):
         return None
     filled = [no_lumps(len(part.segment)) if own is None else own for own, part in zip(each, laid, strict=True)]
-    return filled[0] if len(filled) == 1 else Lumps(*(np.concatenate(of, axis=1) for of in zip(*filled, strict=True)))
+    return filled[0] if len(filled) == 1 else Points(*(np.concatenate(of, axis=1) for of in zip(*filled, strict=True)))
 
 
 def _shifted(numbers: Ints, shift: int) -> Ints:

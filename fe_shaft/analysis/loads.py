@@ -13,7 +13,8 @@ from fe_shaft.analysis.load_words import spin_sentence
 from fe_shaft.errors import LoadError
 from fe_shaft.fem.dofs import NDOF
 from fe_shaft.fem.frames import move_wrench
-from fe_shaft.fem.span import Gathered, Spans, end_loads, gather_mass, gather_uniform, load_deformation
+from fe_shaft.fem.span import Spans
+from fe_shaft.fem.spread import Gathered, end_loads, gather_mass, gather_uniform, load_deformation
 from fe_shaft.model.actions import case_names, gravity_in_shaft
 
 if TYPE_CHECKING:

@@ -15,7 +15,7 @@ from numpy.typing import NDArray
 from fe_shaft.analysis.reactions import Reactions
 from fe_shaft.analysis.solution import Solved
 from fe_shaft.errors import SolutionError
-from fe_shaft.fem.span import loaded_energy
+from fe_shaft.fem.spread import loaded_energy
 from fe_shaft.results.proof import REFUSED_ABOVE, Proof
 
 Array = NDArray[np.float64]

@@ -16,7 +16,7 @@ from fe_shaft.analysis.shouldering import range_remarks
 from fe_shaft.analysis.solution import Solved, counted_twist, solve_model
 from fe_shaft.errors import LoadError
 from fe_shaft.fem.dofs import NDOF, RX, UX
-from fe_shaft.fem.span import Recovery
+from fe_shaft.fem.recovery import Recovery
 from fe_shaft.model.actions import X_AXIS, case_names, clock, gravity_in_shaft
 from fe_shaft.model.gear import Gear
 from fe_shaft.model.notes import Note

@@ -8,7 +8,7 @@ from typing import TYPE_CHECKING
 import numpy as np
 from numpy.typing import NDArray
 
-from fe_shaft.fem.pieces import Lumps
+from fe_shaft.fem.pieces import Points
 from fe_shaft.fem.section import cowper
 from fe_shaft.fem.shoulders import Contour, ShoulderLumps, out_of_range, shoulder_lumps
 
@@ -37,7 +37,7 @@ def contour_of(arrays: SegmentArrays) -> Contour:
 
 
 def shoulders_of(arrays: SegmentArrays) -> ShoulderLumps:
-    """Lumps of a shaft at both ends of every segment; kept with the arrays, which models of one geometry share."""
+    """Points of a shaft at both ends of every segment; kept with the arrays, which models of one geometry share."""
     if "shoulders" not in arrays.memo:
         arrays.memo["shoulders"] = shoulder_lumps(contour_of(arrays))
     lumps: ShoulderLumps = arrays.memo["shoulders"]
@@ -61,12 +61,12 @@ def range_remarks(arrays: SegmentArrays) -> Iterator[tuple[int, str]]:
             yield segment, words
 
 
-def no_lumps(n_pieces: int) -> Lumps:
+def no_lumps(n_pieces: int) -> Points:
     """Pieces without any."""
-    return Lumps(*np.zeros((5, 4, n_pieces)))
+    return Points(*np.zeros((5, 4, n_pieces)))
 
 
-def lumps_in_pieces(arrays: SegmentArrays, ends: Array, segment: Ints) -> Lumps | None:
+def lumps_in_pieces(arrays: SegmentArrays, ends: Array, segment: Ints) -> Points | None:
     """Put the lumps of a shaft into its pieces.
 
     Parameters
@@ -76,7 +76,7 @@ def lumps_in_pieces(arrays: SegmentArrays, ends: Array, segment: Ints) -> Lumps 
 
     Returns
     -------
-    Lumps or None
+    Points or None
         None where no shoulder gives anything.
     """
     if len(arrays.length) == 1:

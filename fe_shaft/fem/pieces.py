@@ -74,9 +74,8 @@ def _rates(diameter: Array, bore: Array, e: Array, g: Array, nu: Array, kappa: A
     return rates
 
 
-@dataclass(frozen=True)
-class Points:
-    """Gauss points of all pieces with the flexibility that each stands for, (q, m) each.
+class Points(NamedTuple):
+    """Flexibility that sits at points of the pieces, (q, m) each: Gauss points of their sections, or shoulders.
 
     Attributes
     ----------
@@ -90,29 +89,13 @@ class Points:
     shear: Array
     bending: Array
 
-
-class Lumps(NamedTuple):
-    """Flexibility that sits at points of the pieces, on top of their sections: shoulders. (r, m) each.
-
-    Attributes
-    ----------
-    eta : [m], from the piece's left end
-    axial, torsion, shear, bending : [m/N, rad/(N m), m/N, rad/(N m)]
-    """
-
-    eta: Array
-    axial: Array
-    torsion: Array
-    shear: Array
-    bending: Array
-
-    def cut(self, pieces: Ints, length: Array) -> Lumps:
+    def cut(self, pieces: Ints, length: Array) -> Points:
         """Of pieces that are cut at a distance from their left ends: what lies before the cut.
 
         Cut at the left end itself, a piece has none: there a place lies before the shoulder.
         """
         before = (self.eta[:, pieces] < length) & (length > np.finfo(float).tiny)
-        return Lumps(self.eta[:, pieces], *(of[:, pieces] * before for of in self[1:]))
+        return Points(self.eta[:, pieces], *(of[:, pieces] * before for of in self[1:]))
 
 
 @dataclass(frozen=True)
@@ -144,7 +127,7 @@ class Pieces:
     share_right: Array | None = None
     chains: tuple[int, ...] = ()
     hanging: tuple[int, ...] = ()
-    lumps: Lumps | None = None
+    lumps: Points | None = None
 
     @property
     def tapered(self) -> bool:
@@ -216,9 +199,7 @@ class Pieces:
         own = Points(eta, *(rates * weight))
         if self.lumps is None:
             return own
-        lumps = Points(*self.lumps)
-        pairs = [(getattr(own, name), getattr(lumps, name)) for name in Points.__dataclass_fields__]
-        return Points(*(np.concatenate(pair) for pair in pairs))
+        return Points(*(np.concatenate(pair) for pair in zip(own, self.lumps, strict=True)))
 
 
 def stretch(of_spans: Array, pieces: Pieces) -> Array:

@@ -35,9 +35,6 @@ if TYPE_CHECKING:
 Array = NDArray[np.float64]
 X_AXIS = np.array([1.0, 0.0, 0.0])
 
-#: The case of a model that names none: every force acts, nothing turns.
-ONLY_CASE = "as_loaded"
-
 
 @dataclass(frozen=True)
 class Action:
@@ -73,8 +70,8 @@ def clock(angle: float) -> Array:
 
 
 def case_names(model: Model) -> tuple[str, ...]:
-    """Names of the load cases; one of our own where the model names none."""
-    return tuple(case.name for case in model.cases) or (ONLY_CASE,)
+    """Names of the load cases; a model that writes none has one all the same."""
+    return tuple(case.name for case in model.cases)
 
 
 def actions(model: Model) -> tuple[Action, ...]:
@@ -181,7 +178,7 @@ def _strands(pulley: Pulley, belt: BeltPull, towards: Array, turning: Array) -> 
 
 def _force(model: Model, force: Force) -> Action:
     arm = np.zeros(3) if force.radius is None or force.angle is None else force.radius.si * clock(force.angle.si)
-    factor = np.array([case.force_factor(force.name) for case in model.cases] or [1.0])[:, None]
+    factor = np.array([case.force_factor(force.name) for case in model.cases])[:, None]
     couple = np.zeros(3) if force.couple is None else np.array(force.couple.si)
     return _act(model, force, "force", arm, factor * np.array(force.force_si), factor * couple)
 

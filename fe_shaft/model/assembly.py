@@ -9,7 +9,7 @@ import numpy as np
 from numpy.typing import NDArray
 
 from fe_shaft.errors import nearest, quote
-from fe_shaft.model.case import Case
+from fe_shaft.model.case import ONLY_CASE, Case
 from fe_shaft.model.draft import Draft
 from fe_shaft.model.frame import Frame, frame_faults, frame_of
 from fe_shaft.model.gear import Gear
@@ -27,7 +27,6 @@ from fe_shaft.model.support import Support
 from fe_shaft.model.words import Fault, Named
 
 Array = NDArray[np.float64]
-UNWRITTEN_CASE = "as_loaded"  # the one case of a model that writes none: forces and weights only
 _MODEL_KEYS = frozenset((*Heading.model_fields, *GROUPS))  # no names for parts
 
 
@@ -185,7 +184,7 @@ class Assembly:
                 self.faults.append(Fault(("cases", case.name, *fault.path), fault.sentence))
             self._case_names(case, done)
         if not written:
-            self.cases = {UNWRITTEN_CASE: Case(UNWRITTEN_CASE)}
+            self.cases = {ONLY_CASE: Case(ONLY_CASE)}
 
     def _resolved(self, case: Case, written: Mapping[str, Case], seen: tuple[str, ...]) -> Case:
         if case.like is None:

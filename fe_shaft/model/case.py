@@ -20,6 +20,9 @@ _FORCES = Factor(-1e6, 1e6)
 Through = Annotated[str | Mapping[str, float], Shares(_SHARE, total=1.0, word=True)]
 Switched = Annotated[tuple[str, ...] | Mapping[str, float], Shares(_FORCES, lists=True)]
 
+#: The one case of a model that writes none: forces and weights only.
+ONLY_CASE = "as_loaded"
+
 
 class Case(Named):
     """One load case."""

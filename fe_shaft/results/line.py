@@ -14,7 +14,9 @@ from numpy.typing import ArrayLike, NDArray
 
 from fe_shaft.fem.dofs import NDOF
 from fe_shaft.fem.pieces import Pieces
-from fe_shaft.fem.span import Gathered, Recovery, flexibility, gather_mass, gather_uniform
+from fe_shaft.fem.recovery import Recovery
+from fe_shaft.fem.span import flexibility
+from fe_shaft.fem.spread import Gathered, gather_mass, gather_uniform
 
 Array = NDArray[np.float64]
 

@@ -5,7 +5,7 @@ from dataclasses import replace
 import numpy as np
 import pytest
 
-from fe_shaft.fem.span import end_loads, gather_mass, gather_uniform
+from fe_shaft.fem.spread import end_loads, gather_mass, gather_uniform
 from tests.fem.chains import RHO, chain
 from tests.fem.test_span import cantilever
 

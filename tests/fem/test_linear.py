@@ -8,7 +8,7 @@ from fe_shaft.fem import assembly, linear, system
 from fe_shaft.fem.assembly import Constraint, Springs, reduce
 from fe_shaft.fem.frames import rigid_link
 from fe_shaft.fem.linear import solve
-from fe_shaft.fem.span import end_loads, gather_uniform, load_deformation
+from fe_shaft.fem.spread import end_loads, gather_uniform, load_deformation
 from fe_shaft.fem.system import Network
 from tests.fem.chains import E, G, chain, condensed
 

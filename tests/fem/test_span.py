@@ -4,16 +4,9 @@ import numpy as np
 import pytest
 
 from fe_shaft.fem.frames import move_wrench, rigid_link
-from fe_shaft.fem.span import (
-    Recovery,
-    condense,
-    deformation_matrices,
-    end_loads,
-    flexibility,
-    gather_mass,
-    gather_uniform,
-    load_deformation,
-)
+from fe_shaft.fem.recovery import Recovery
+from fe_shaft.fem.span import condense, deformation_matrices, flexibility
+from fe_shaft.fem.spread import end_loads, gather_mass, gather_uniform, load_deformation
 from tests.fem.chains import NU, RHO, E, G, chain, condensed
 
 CYLINDER_I = np.pi / 64 * 0.04**4

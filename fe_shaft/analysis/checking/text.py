@@ -6,7 +6,7 @@ from collections.abc import Iterator, Sequence
 from typing import TYPE_CHECKING
 
 from fe_shaft.errors import WIDTH
-from fe_shaft.model.actions import ONLY_CASE
+from fe_shaft.model.case import ONLY_CASE
 from fe_shaft.results.words.layout import labelled, paragraph
 from fe_shaft.results.words.wording import Names, listed, plain
 from fe_shaft.units import convert, show

@@ -5,7 +5,7 @@ from __future__ import annotations
 from dataclasses import dataclass, field
 from typing import TYPE_CHECKING
 
-from fe_shaft.model.actions import ONLY_CASE
+from fe_shaft.model.case import ONLY_CASE
 from fe_shaft.model.groups import CARRIERS
 from fe_shaft.model.loads import Force, Mass
 from fe_shaft.results.shown import Shown

@@ -8,7 +8,8 @@ from dataclasses import replace
 import numpy as np
 from numpy.typing import NDArray
 
-from fe_shaft.model.actions import ONLY_CASE, gravity_in_shaft, shaft_mass
+from fe_shaft.model.actions import gravity_in_shaft, shaft_mass
+from fe_shaft.model.case import ONLY_CASE
 from fe_shaft.model.groups import noun
 from fe_shaft.model.support import Bearing
 from fe_shaft.results.movement import SupportMovement
