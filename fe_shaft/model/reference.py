@@ -10,9 +10,7 @@ from fe_shaft.model.draft import FILE_KEYS
 from fe_shaft.model.groups import GROUPS
 from fe_shaft.model.heading import Heading
 from fe_shaft.model.kinds import Kind
-from fe_shaft.model.limit import QUANTITIES
 from fe_shaft.model.lists import Listed
-from fe_shaft.model.material import BUILT_IN_NAMES
 from fe_shaft.model.notes import kind_of
 from fe_shaft.model.plain import as_toml
 from fe_shaft.model.quantity import Quantity
@@ -157,6 +155,3 @@ def _default(noun: type[Words], key: str) -> str:
         return ""
     value = written(field.get_default(call_default_factory=True))
     return "" if value in (None, "", {}) else as_toml(value)
-
-
-LISTS = {"material": BUILT_IN_NAMES, "quantity": tuple(QUANTITIES)}  # what may stand in some keys, for `explain`
