@@ -48,7 +48,8 @@ def to_model(spec: ShaftSpec, splits: int = 1, units: Units = SI, **placing: Any
     if gravity is not None:
         gravity = [text(part, "m/s^2") for part in gravity] if any(gravity) else None
     parts = to_parts(spec, splits, units, **placing)
-    return fs.Model("random shaft", parts, to_cases(spec), materials=[to_material(spec, units)], gravity=gravity)
+    materials = [to_material(spec, units)]
+    return fs.Model("random shaft", parts, to_cases(spec), materials=materials, gravity=gravity, shoulders="off")
 
 
 def to_parts(spec: ShaftSpec, splits: int = 1, units: Units = SI, name: str = "shaft", **placing: Any) -> list[Any]:

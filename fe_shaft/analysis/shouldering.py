@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Iterator
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 import numpy as np
 from numpy.typing import NDArray
@@ -55,10 +55,14 @@ BEYOND = {
 
 def range_remarks(arrays: SegmentArrays) -> Iterator[tuple[int, str]]:
     """Segments whose shoulders leave the range of the rule, and what that means."""
-    found = out_of_range(contour_of(arrays))
-    for field, words in BEYOND.items():
-        for segment in np.flatnonzero(getattr(found, field).any(axis=-1)).tolist():
-            yield segment, words
+    if "beyond" not in arrays.memo:
+        found = out_of_range(contour_of(arrays))
+        arrays.memo["beyond"] = [
+            (segment, words)
+            for field, words in BEYOND.items()
+            for segment in np.flatnonzero(getattr(found, field).any(axis=-1)).tolist()
+        ]
+    yield from arrays.memo["beyond"]
 
 
 def no_lumps(n_pieces: int) -> Points:
@@ -79,25 +83,54 @@ def lumps_in_pieces(arrays: SegmentArrays, ends: Array, segment: Ints) -> Points
     Points or None
         None where no shoulder gives anything.
     """
+    lumps = flexible_lumps(arrays)
+    if lumps is None:
+        return None
+    numbers = np.arange(len(arrays.length))
+    first, last = segment.searchsorted(numbers), segment.searchsorted(numbers, side="right") - 1
+    out = np.zeros((5, 4, len(segment)))
+    out[1:4, LEFT_PLANE, first], out[1:4, RIGHT_PLANE, last] = lumps.plane[:, 0], lumps.plane[:, 1]
+    out[0, RIGHT_PLANE, last] = ends[last + 1] - ends[last]
+    inside = (ends.searchsorted(lumps.place, side="right") - 1).clip(first, last)
+    out[0, _BENDING, inside], out[4, _BENDING, inside] = lumps.place - ends[inside], lumps.bending
+    return Points(*out)
+
+
+_BENDING = np.array([[LEFT_BENDING], [RIGHT_BENDING]])
+
+
+class FlexibleLumps(NamedTuple):
+    """The lumps of a shaft with its material.
+
+    Attributes
+    ----------
+    plane : (3, 2, n) [m/N, rad/(N m), m/N]
+        Axial, torsion and shear flexibility at both ends of each segment.
+    place, bending : (2, n) [m, rad/(N m)]
+    """
+
+    plane: Array
+    place: Array
+    bending: Array
+
+
+def flexible_lumps(arrays: SegmentArrays) -> FlexibleLumps | None:
+    """What the shoulders of a shaft give, kept with its arrays; None where that is nothing."""
+    if "flexible" not in arrays.memo:
+        arrays.memo["flexible"] = _flexible(arrays)
+    lumps: FlexibleLumps | None = arrays.memo["flexible"]
+    return lumps
+
+
+def _flexible(arrays: SegmentArrays) -> FlexibleLumps | None:
     if len(arrays.length) == 1:
         return None
     found = shoulders_of(arrays)
     if not found.bending.any():
         return None
-    n = len(arrays.length)
-    first, last = np.searchsorted(segment, np.arange(n)), np.searchsorted(segment, np.arange(n), side="right") - 1
-    e, g, shear = arrays.youngs_modulus, arrays.shear_modulus, _shear_share(arrays)
-    lumps = no_lumps(len(segment))
-    for side, plane, row, piece in ((0, LEFT_PLANE, LEFT_BENDING, first), (1, RIGHT_PLANE, RIGHT_BENDING, last)):
-        lumps.axial[plane, piece] = found.axial[:, side] / e
-        lumps.torsion[plane, piece] = found.torsion[:, side] / g
-        lumps.shear[plane, piece] = found.shear[:, side] / g * shear
-        lumps.eta[plane, piece] = (ends[piece + side] - ends[piece]) * side
-        place = found.bending_place[:, side]
-        inside = np.clip(np.searchsorted(ends, place, side="right") - 1, first, last)
-        lumps.bending[row, inside] = found.bending[:, side] / e
-        lumps.eta[row, inside] = place - ends[inside]
-    return lumps
+    e, g = arrays.youngs_modulus, arrays.shear_modulus
+    plane = np.stack([found.axial.T / e, found.torsion.T / g, found.shear.T / g * _shear_share(arrays)])
+    return FlexibleLumps(plane, np.ascontiguousarray(found.bending_place.T), found.bending.T / e)
 
 
 def _shear_share(arrays: SegmentArrays) -> Array:

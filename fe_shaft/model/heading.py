@@ -38,9 +38,9 @@ class Heading(Words):
         default=None, description="The housing.", examples=[{"seat": {"radial": "~400 N/um"}}]
     )
     shoulders: Annotated[str, Choice("on", "off")] = Field(
-        default="off",
+        default="on",
         description="`on`: shoulders make the shafts softer, by a rule made for this project; `off`: the plain beam.",
-        examples=["on"],
+        examples=["off"],
     )
     estimates: Estimates = Field(
         default_factory=Estimates, description="How estimates are varied.", examples=[{"together": True}]

@@ -119,7 +119,8 @@ def test_several_shafts_in_one_model_are_each_as_alone():
             parts += to_parts(spec, name=name, left_end=["0 m", "0 m", f"{k} m"])
             materials.append(to_material(spec, name=f"drawn_{name}"))
             factors |= to_cases(spec, front=f"{name}_")[0].forces
-        model = fs.Model("three", parts, [fs.Case("case_1", forces=factors)], materials=materials, gravity="down")
+        cases = [fs.Case("case_1", forces=factors)]
+        model = fs.Model("three", parts, cases, materials=materials, gravity="down", shoulders="off")
         together = fs.solve(model)
         for name, spec in zip(names, specs, strict=True):
             alone = replace(spec, cases=spec.cases[:1])

@@ -23,18 +23,19 @@ STEPPED = [
 TIP = fs.Force("tip", at="140 mm", couple={"front": "100 N m", "axial": "50 N m"}, axial="2 kN")
 
 
-def test_the_plain_beam_is_the_default_and_says_so():
+def test_shoulders_count_unless_switched_off_and_the_notes_say_which():
     model = cantilever(STEPPED, [TIP])
-    assert model.shoulders == "off"
-    assert any("carry to their rims" in note.sentence for note in model.notes)
+    assert model.shoulders == "on"
+    assert any("make the shafts softer" in note.sentence for note in model.notes)
+    assert any("carry to their rims" in note.sentence for note in cantilever(STEPPED, [TIP], shoulders="off").notes)
     smooth = cantilever([fs.Segment("one", length="140 mm", diameter="30 mm")], [TIP])
     assert not any(note.key == "shoulders" for note in smooth.notes)
 
 
 def test_a_shoulder_adds_exactly_its_lumps():
     """Under pure moment, torque and axial force a cantilever's tip moves by the lumps times the load (unit load)."""
-    off = fs.solve(cantilever(STEPPED, [TIP])).case()["tip"]
-    on = fs.solve(cantilever(STEPPED, [TIP], shoulders="on")).case()["tip"]
+    off = fs.solve(cantilever(STEPPED, [TIP], shoulders="off")).case()["tip"]
+    on = fs.solve(cantilever(STEPPED, [TIP])).case()["tip"]
     lumps = shoulder_lumps(Contour.of([0.06, 0.08], [0.05, 0.03], fillet_left=[0, 0.002], fillet_right=[0, 0.002]))
     assert on.u[5] - off.u[5] == pytest.approx(100 * lumps.bending.sum() / E, rel=1e-9)
     assert on.u[3] - off.u[3] == pytest.approx(50 * lumps.torsion.sum() / G, rel=1e-9)
@@ -50,10 +51,10 @@ def test_cutting_a_segment_or_adding_stations_changes_nothing():
         fs.Segment("rest", length="79 mm", diameter="30 mm", fillet="2 mm"),
     ]
     loads = [TIP, fs.Force("spread", at="70 mm", up="-3 kN", front="1 kN", spread="40 mm")]
-    one = fs.solve(cantilever(STEPPED, loads, shoulders="on", gravity="down"))
-    two = fs.solve(cantilever(cut, loads, shoulders="on", gravity="down"))
+    one = fs.solve(cantilever(STEPPED, loads, gravity="down"))
+    two = fs.solve(cantilever(cut, loads, gravity="down"))
     marks = [fs.Force(f"mark_{x}", at=f"{x} mm", up="0 N") for x in (58, 60, 61, 62, 64, 100)]
-    three = fs.solve(cantilever(STEPPED, [*loads, *marks], shoulders="on", gravity="down"))
+    three = fs.solve(cantilever(STEPPED, [*loads, *marks], gravity="down"))
     for other in (two, three):
         np.testing.assert_allclose(other["tip"].u, one["tip"].u, rtol=1e-11)
     for mark in marks:
@@ -66,23 +67,23 @@ def test_without_shear_there_is_no_shear_lump():
     force = fs.Force("tip", at="140 mm", up="1 kN")
     segments = [fs.Segment(s.name, length=s.length.text, diameter=s.diameter.text, shear="none") for s in STEPPED]
     lumps = shoulder_lumps(Contour.of([0.06, 0.08], [0.05, 0.03]))
-    off = fs.solve(cantilever(segments, [force])).case()["tip"].up
-    on = fs.solve(cantilever(segments, [force], shoulders="on")).case()["tip"].up
+    off = fs.solve(cantilever(segments, [force], shoulders="off")).case()["tip"].up
+    on = fs.solve(cantilever(segments, [force])).case()["tip"].up
     levers = 0.140 - lumps.bending_place
     assert on - off == pytest.approx(1000 * (lumps.bending * levers**2).sum() / E, rel=1e-9)
 
 
 def test_what_leaves_the_range_of_the_rule_is_told():
     disc = [*STEPPED, fs.Segment("disc", length="4 mm", diameter="120 mm")]
-    results = fs.solve(cantilever(disc, [TIP], shoulders="on"))
+    results = fs.solve(cantilever(disc, [TIP]))
     told = [note.sentence for note in results.notes if note.key == "shoulders"]
     assert any("shaft.thin" in sentence and "thin disc" in sentence for sentence in told)
     assert any("D/d = 3" in sentence for sentence in told)
-    assert not any("shaft." in note.sentence for note in fs.solve(cantilever(STEPPED, [TIP], shoulders="on")).notes)
+    assert not any("shaft." in note.sentence for note in fs.solve(cantilever(STEPPED, [TIP])).notes)
 
 
 def test_the_rule_is_worked_out_once_for_all_models_of_one_geometry():
-    model = cantilever(STEPPED, [TIP], shoulders="on")
+    model = cantilever(STEPPED, [TIP])
     solve_once(model)
     arrays = model.segment_arrays["shaft"]
     assert model.pinned().segment_arrays["shaft"].memo["shoulders"] is arrays.memo["shoulders"]
@@ -92,7 +93,7 @@ def test_shoulders_are_reached_from_file_and_command_line(tmp_path, capsys):
     from fe_shaft.cli import main
 
     path = tmp_path / "shaft.toml"
-    fs.write(cantilever(STEPPED, [TIP], shoulders="on"), path)
+    fs.write(cantilever(STEPPED, [TIP]), path)
     assert fs.read(path).shoulders == "on"
     assert main(["compare", str(path), str(path), "--set", "shoulders=off"]) == 0
-    assert "shoulders: on -> off" in capsys.readouterr().out
+    assert "shoulders: not written -> off" in capsys.readouterr().out

@@ -109,9 +109,10 @@ class Plane:
         return fs.Force(name, at=text(x, "m"), couple={"up": text(-front, "N m"), "front": text(up, "N m")})
 
     def solve(self, segments: Sequence[fs.Segment], *parts: Any, shear: float | str = "none", **heading: Any) -> Bent:
-        """Solve a shaft of the test's steel."""
+        """Solve a shaft of the test's steel as the plain beam of the formulas, which know no shoulders."""
         shaft = fs.Shaft("shaft", list(segments), material=STEEL.name, shear=shear)
-        return Bent(self, fs.solve(fs.Model("beam", [shaft, *parts], materials=[STEEL], **heading)))
+        model = fs.Model("beam", [shaft, *parts], materials=[STEEL], shoulders="off", **heading)
+        return Bent(self, fs.solve(model))
 
 
 @dataclass(frozen=True)

@@ -18,7 +18,7 @@ def test_defaults_of_a_plain_model() -> None:
         "hub": "gear bodies rigid, not stiffening the shaft",
         "mate": "mates stand still",
         "layshaft.shear": "shear: Cowper",
-        "shoulders": "shoulders carry to their rims, as in a plain beam",
+        "shoulders": "shoulders make the shafts softer, by a rule made for this project",
         "wheel.pressure_angle": "pressure_angle 20 deg (ISO 53): wheel, pinion",
         "pinion.helix": "spur gears: pinion",
         "efficiency": "efficiency 1",
