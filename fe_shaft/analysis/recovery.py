@@ -56,6 +56,7 @@ def solve_once(model: Model) -> Results:
         actions=solved.actions,
         proof=proof,
         balances=(*_balance_notes(solved), *_shoulder_notes(model)),
+        solve_plain=None if solved.grid.pieces.lumps is None else lambda: solve_once(model.plain()),
     )
 
 

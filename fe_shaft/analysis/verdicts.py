@@ -31,7 +31,11 @@ def _judge(limit: Limit, results: Results, pins: Results | None, mixes: Mixes | 
     values = bounds.values(results, parts, cases)
     used = bounds.use(values)
     part, case = (int(k) for k in np.unravel_index(used.argmax(), used.shape))
-    alone = None if pins is None else float(bounds.values(pins, parts, cases)[part, case])
+
+    def beside(other: Results | None) -> float | None:
+        return None if other is None else float(bounds.values(other, parts, cases)[part, case])
+
+    plain = beside(results.plain)
     return Verdict(
         limit=limit.name,
         part=parts[part],
@@ -45,7 +49,8 @@ def _judge(limit: Limit, results: Results, pins: Results | None, mixes: Mixes | 
         source=limit.source or "",
         counting=limit.counting,
         band=None if mixes is None else _band(bounds, mixes, parts, cases),
-        shaft_alone=alone,
+        shaft_alone=beside(pins),
+        by_shoulders=None if plain is None else float(values[part, case]) - plain,
     )
 
 

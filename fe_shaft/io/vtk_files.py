@@ -23,6 +23,7 @@ from numpy.typing import NDArray
 from fe_shaft.errors import FileError
 from fe_shaft.files import whole, write_whole
 from fe_shaft.results.body import line_fields, revolve
+from fe_shaft.results.of_shoulders import along_of_shoulders
 
 if TYPE_CHECKING:
     from fe_shaft.results.line import Line
@@ -103,9 +104,15 @@ def case_list(cases: Sequence[str], files: Sequence[str]) -> str:
 
 @dataclass(frozen=True)
 class _Shaft:
-    """One shaft in the model's coordinates."""
+    """One shaft in the model's coordinates.
+
+    Attributes
+    ----------
+    by_shoulders : (n_cases, n, 6) [m, rad], what of its movement the shoulders make
+    """
 
     line: Line
+    by_shoulders: Floats
     origin: Floats
     rotation: Floats
 
@@ -115,7 +122,10 @@ class _Shaft:
 
 def _shafts(results: Results) -> list[_Shaft]:
     frames = results.model.frames
-    return [_Shaft(line, frames[name].origin, frames[name].rotation) for name, line in results.lines.items()]
+    return [
+        _Shaft(line, along_of_shoulders(results, name), frames[name].origin, frames[name].rotation)
+        for name, line in results.lines.items()
+    ]
 
 
 class _Lines:
@@ -140,6 +150,7 @@ class _Lines:
         line = shaft.line
         left, right = line.force_left[case], line.force_right[case]
         return _movement(shaft, line.u[case], number) | {
+            "displacement by shoulders [m]": shaft.to_model(shaft.by_shoulders[case][:, :3]),
             "section force left [N]": left[:, :3],
             "section force right [N]": right[:, :3],
             "section moment left [N m]": left[:, 3:],

@@ -199,17 +199,25 @@ class Model(Lookup):
         """The model with every bearing a rigid pin that holds the same; seats are dropped."""
         return self._with_supports({support.name: pin_of(support) for support in self.supports}, None)
 
+    def plain(self) -> Self:
+        """The model without its shoulders: every segment carries to its rim from end to end."""
+        given = self.heading.given | {"shoulders"}
+        return self._altered(heading=Heading.model_construct(given, **{**self.heading.__dict__, "shoulders": "off"}))
+
     def _with_supports(self, written: Mapping[str, Support], housing: Housing | None) -> Self:
         """The same model with other supports in the same places."""
         given = self.heading.given if housing is not None else self.heading.given - {HOUSING}
-        heading = Heading.model_construct(set(given), **{**self.heading.__dict__, "housing": housing})
-        new = object.__new__(type(self))
-        new._put(**{key: value for key, value in self.__dict__.items() if key not in _CACHED})
-        new._put(
-            heading=heading,
+        return self._altered(
+            heading=Heading.model_construct(set(given), **{**self.heading.__dict__, "housing": housing}),
             parts=tuple(written.get(part.name, part) for part in self.parts),
             supports=tuple(seated(written[support.name], housing) for support in self.supports),
         )
+
+    def _altered(self, **attributes: Any) -> Self:
+        """The same model with other attributes; what was worked out from them is forgotten."""
+        new = object.__new__(type(self))
+        new._put(**{key: value for key, value in self.__dict__.items() if key not in _CACHED})
+        new._put(**attributes)
         return new
 
     def change(self, changes: Mapping[str, Any]) -> Self:

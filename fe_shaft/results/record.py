@@ -12,6 +12,7 @@ from typing import TYPE_CHECKING, Any
 import numpy as np
 
 from fe_shaft.model.groups import noun
+from fe_shaft.results.of_shoulders import of_shoulders
 from fe_shaft.results.quantity import QUANTITIES
 from fe_shaft.results.words.doubts import too_far
 from fe_shaft.version import VERSION as PROGRAM
@@ -38,14 +39,16 @@ def results_record(results: Results) -> dict[str, Any]:
     -------
     dict
         `cases` gives the order of every list over the cases. `parts`: quantities by name. `shafts`: stations `x`, then
-        per case and station `displacements` and section forces `forces_left`, `forces_right`. A value that is no finite
-        number (the use of a limit against nothing) is None.
+        per case and station `displacements` and section forces `forces_left`, `forces_right`. `by_shoulders`: how much
+        of each quantity is the shoulders' doing, None where no shoulder counts. A value that is no finite number (the
+        use of a limit against nothing) is None.
     """
     return {
         **_head("results"),
         "model": _model(results),
         "cases": list(results.cases),
         "parts": {name: _part(results, name) for name in results.parts},
+        "by_shoulders": _by_shoulders(results),
         "shafts": {name: _shaft(results, name) for name in results.lines},
         "loads": [_load(action) for action in results.actions],
         "verdicts": [_verdict(verdict) for verdict in results.verdicts],
@@ -106,6 +109,15 @@ def _part(results: Results, name: str) -> dict[str, Any]:
     return {"kind": noun(results.model[name]), "shaft": place.shaft, "x": place.x, **quantities}
 
 
+def _by_shoulders(results: Results) -> dict[str, Any] | None:
+    if results.plain is None:
+        return None
+    return {
+        name: {key: _list(np.asarray(value)) for key, value in of_shoulders(results, name).items()}
+        for name in results.parts
+    }
+
+
 def _shaft(results: Results, name: str) -> dict[str, Any]:
     line = results.lines[name]
     return {
@@ -146,6 +158,7 @@ def _verdict(verdict: Verdict) -> dict[str, Any]:
         "use_per_case": dict(verdict.per_case),
         "counting": verdict.counting,
         "shaft_alone": verdict.shaft_alone,
+        "by_shoulders": verdict.by_shoulders,
         "source": verdict.source,
         "band": None
         if band is None

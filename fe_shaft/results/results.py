@@ -2,8 +2,9 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator, Mapping
-from dataclasses import dataclass
+from collections.abc import Callable, Iterator, Mapping
+from dataclasses import dataclass, field
+from functools import cached_property
 from typing import TYPE_CHECKING, Any
 
 import numpy as np
@@ -55,6 +56,7 @@ class Results:
     proof : equilibrium, energy, residual, digits
     balances : what the solution adds to the model's notes: torques taken out, shoulders beyond their rule
     verdicts : of the model's limits
+    solve_plain : solves the same model without its shoulders; None where none counts
     """
 
     model: Model
@@ -65,6 +67,15 @@ class Results:
     proof: Proof
     balances: tuple[Note, ...] = ()
     verdicts: tuple[Verdict, ...] = ()
+    solve_plain: Callable[[], Results] | None = field(default=None, repr=False, compare=False)
+
+    @cached_property
+    def plain(self) -> Results | None:
+        """The same model as a plain beam, which lets every shoulder carry to its rim; None where no shoulder counts.
+
+        It is solved when it is first asked for.
+        """
+        return None if self.solve_plain is None else self.solve_plain()
 
     @property
     def notes(self) -> tuple[Note, ...]:
@@ -112,6 +123,17 @@ class Results:
         quantity, values = self._look_up(address)
         shown = values / unit_factor(quantity.dimension, unit or quantity.unit)
         return shown if case is None else float(shown[self.case_number(case)])
+
+    def by_shoulders(self, address: str, case: str | None = None, unit: str | None = None) -> Any:
+        """How much of a quantity is the shoulders' doing: its value less that of the plain beam.
+
+        Parameters
+        ----------
+        address : such as "wheel.deflection"
+        case, unit : as in `value`
+        """
+        whole = self.value(address, case, unit)
+        return whole - (whole if self.plain is None else self.plain.value(address, case, unit))
 
     def worst(self, address: str, unit: str | None = None) -> Worst:
         """The value that is largest in size over all cases, with its case."""

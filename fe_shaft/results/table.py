@@ -5,7 +5,7 @@ from __future__ import annotations
 import csv
 import io
 import math
-from collections.abc import Iterable, Iterator, Sequence
+from collections.abc import Iterable, Iterator, Mapping, Sequence
 from dataclasses import dataclass
 from typing import TYPE_CHECKING, Any
 
@@ -15,6 +15,7 @@ from numpy.typing import NDArray
 from fe_shaft.errors import UsageError, nearest
 from fe_shaft.model.groups import noun
 from fe_shaft.results.movement import SupportMovement
+from fe_shaft.results.of_shoulders import along_of_shoulders, of_shoulders
 from fe_shaft.results.quantity import QUANTITIES
 from fe_shaft.results.shown import Shown
 
@@ -99,11 +100,30 @@ def _harmless(text: str) -> str:
 def movement_table(results: Results) -> Table:
     """All quantities of all parts: one row a part and case, in the units the model asks for."""
     shown = Shown.of(results.model)
-    kinds = [part.quantities() for part in results.parts.values()]
-    wanted = [name for name in QUANTITIES if any(name in quantities for quantities in kinds)]
+    wanted = _wanted(results)
     columns = ("case", "part", "kind", "shaft", f"x_{shown.suffix('along')}", *map(shown.heading, wanted))
-    rows = _rows_of_parts(results, shown, list(results.parts), wanted)
+    rows = _rows_of_parts(results, shown, _all_quantities(results, results.parts), wanted)
     return Table(columns, tuple(rows))
+
+
+def shoulder_table(results: Results) -> Table:
+    """How much of every quantity of every part is the shoulders' doing: rows and columns as in `movement_table`."""
+    shown = Shown.of(results.model)
+    wanted = _wanted(results)
+    columns = ("case", "part", "kind", "shaft", f"x_{shown.suffix('along')}", *map(shown.heading, wanted))
+    made = {name: of_shoulders(results, name) for name in results.parts}
+    return Table(columns, tuple(_rows_of_parts(results, shown, made, wanted)))
+
+
+def _wanted(results: Results) -> list[str]:
+    """Every quantity that any part has."""
+    kinds = [part.quantities() for part in results.parts.values()]
+    return [name for name in QUANTITIES if any(name in quantities for quantities in kinds)]
+
+
+def _all_quantities(results: Results, names: Iterable[str]) -> dict[str, dict[str, Array]]:
+    parts = {name: results.parts[name] for name in names}
+    return {name: {key: np.asarray(part.value(key)) for key in part.quantities()} for name, part in parts.items()}
 
 
 def force_table(results: Results) -> Table:
@@ -111,37 +131,32 @@ def force_table(results: Results) -> Table:
     shown = Shown.of(results.model)
     supports = [name for name, part in results.parts.items() if isinstance(part, SupportMovement)]
     columns = ("case", "part", "kind", "shaft", f"x_{shown.suffix('along')}", *map(shown.heading, _FORCES))
-    return Table(columns, tuple(_rows_of_parts(results, shown, supports, _FORCES)))
+    return Table(columns, tuple(_rows_of_parts(results, shown, _all_quantities(results, supports), _FORCES)))
 
 
 def _rows_of_parts(
-    results: Results, shown: Shown, names: Sequence[str], quantities: Sequence[str]
+    results: Results, shown: Shown, of: Mapping[str, Mapping[str, Array]], quantities: Sequence[str]
 ) -> Iterator[tuple[Cell, ...]]:
-    """One row a part and case, case by case."""
+    """One row a part and case, case by case; `of` has the values [SI] by part and quantity."""
     model = results.model
-    values = {name: _shown_values(results, shown, name, quantities) for name in names}
+    values = {name: _shown_values(shown, own, quantities) for name, own in of.items()}
     for k, case in enumerate(results.cases):
-        for name in names:
+        for name in of:
             place = model.places[name]
             x = place.x / shown.factor("along")
             cells = (None if array is None else float(array[k]) for array in values[name])
             yield (case, name, noun(model[name]), place.shaft, x, *cells)
 
 
-def _shown_values(results: Results, shown: Shown, name: str, quantities: Sequence[str]) -> list[Array | None]:
-    part = results.parts[name]
-    own = set(part.quantities())
-    return [
-        np.asarray(part.value(key)) / shown.factor(QUANTITIES[key].dimension) if key in own else None
-        for key in quantities
-    ]
+def _shown_values(shown: Shown, own: Mapping[str, Array], quantities: Sequence[str]) -> list[Array | None]:
+    return [own[key] / shown.factor(QUANTITIES[key].dimension) if key in own else None for key in quantities]
 
 
 def station_table(results: Results) -> Table:
     """Every station of every shaft: movements, and section forces just left and just right of it.
 
     The section forces N, V (towards 12 and 3 o'clock), T, M act on the face that looks to the right; M_up turns about
-    the 12 o'clock axis, M_front about the 3 o'clock axis.
+    the 12 o'clock axis, M_front about the 3 o'clock axis. The last columns: what of a movement the shoulders make.
     """
     shown = Shown.of(results.model)
     movement = ("axial", "up", "front", "twist", "deflection", "slope")
@@ -153,20 +168,24 @@ def station_table(results: Results) -> Table:
         f"x_{shown.suffix('along')}",
         *map(shown.heading, movement),
         *(f"{name}_{force if dimension == 'force' else moment}" for name, dimension in sections),
+        *(f"{name}_by_shoulders_{shown.suffix(dimension)}" for name, dimension in _BY_SHOULDERS),
     )
+    length, angle = shown.factor("length"), shown.factor("angle")
     rows: list[tuple[Cell, ...]] = []
     for k, case in enumerate(results.cases):
         for shaft, line in results.lines.items():
             x = line.x / shown.factor("along")
-            u = line.u[k] / np.repeat([shown.factor("length"), shown.factor("angle")], 3)
-            radial, slope = line.deflection[k] / shown.factor("length"), line.slope[k] / shown.factor("angle")
+            u = line.u[k] / np.repeat([length, angle], 3)
+            radial, slope = line.deflection[k] / length, line.slope[k] / angle
             scale = np.repeat([shown.factor("force"), shown.factor("moment")], 3)
             left, right = line.force_left[k] / scale, line.force_right[k] / scale
-            numbers = np.column_stack([x, u[:, :4], radial, slope, left, right])
+            made = along_of_shoulders(results, shaft)[k, :, :4] / np.repeat([length, angle], (3, 1))
+            numbers = np.column_stack([x, u[:, :4], radial, slope, left, right, made])
             rows += [(case, shaft, *row) for row in numbers.tolist()]
     return Table(columns, tuple(rows))
 
 
+_BY_SHOULDERS = (("axial", "length"), ("up", "length"), ("front", "length"), ("twist", "angle"))
 _SECTION = (
     ("axial_force", "force"),
     ("shear_up", "force"),

@@ -73,6 +73,7 @@ class Verdict:
     per_case : use in each case the limit speaks of
     band : over the estimates, None where nothing is estimated
     shaft_alone : the value on rigid pins, None where pins cannot hold the shaft
+    by_shoulders : how much of the value is the shoulders' doing, None where no shoulder counts
     """
 
     limit: str
@@ -88,6 +89,7 @@ class Verdict:
     counting: str
     band: Band | None = None
     shaft_alone: float | None = None
+    by_shoulders: float | None = None
 
     @property
     def word(self) -> Word:

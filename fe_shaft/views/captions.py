@@ -7,10 +7,11 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import dataclass
-from typing import TYPE_CHECKING, Any
+from typing import TYPE_CHECKING, Any, NamedTuple
 
 import numpy as np
 
+from fe_shaft.results.of_shoulders import of_shoulders
 from fe_shaft.results.shown import Shown as Units
 from fe_shaft.units import show, unit_factor
 from fe_shaft.views.arrows import Tail
@@ -65,7 +66,8 @@ class Captions:
         """Title, what the half shows, case; and always how far the movement is exaggerated. Returns the box taken."""
         font = self.overlay.font
         step, left, top = LINE_HEIGHT * font, 0.9 * font, size[1] - 1.7 * font
-        factor = f"drawn x {factor_text(shown.factor)}; true: {true_movement(self.results, self.drawing, shown.case)}"
+        largest = largest_movement(self.results, self.drawing, shown.case)
+        factor = f"drawn x {factor_text(shown.factor)}; true: {largest.text}"
         room = size[0] - 3 * left - self.overlay.size(factor, bold=True)[0]
         rows = {
             "title": self._fitting(self.results.model.title or "shaft", room),
@@ -75,6 +77,9 @@ class Captions:
         for number, (key, text) in enumerate(rows.items()):
             self.overlay.write(key, text, (left, top - number * step), bold=key == "heading")
         self.overlay.write("factor", factor, (size[0] - left, top), bold=True, align="right")
+        if self.results.plain is not None:
+            made = f"of it by shoulders: {show(largest.by_shoulders, self.units.length)}"
+            self.overlay.write("made", made, (size[0] - left, top - step), align="right")
         return (0.0, top - 2.4 * step, size[0], size[1])
 
     def _fitting(self, text: str, room: float) -> str:
@@ -165,24 +170,37 @@ def called_cases(results: Results) -> list[str]:
     return [labels.get(name) or name for name in results.cases]
 
 
-def true_movement(results: Results, drawing: Drawing, case: int) -> str:
+class Largest(NamedTuple):
+    """The largest movement of a half: what is said of it, and how much of it the shoulders make [m]."""
+
+    value: float
+    text: str
+    by_shoulders: float
+
+
+def largest_movement(results: Results, drawing: Drawing, case: int) -> Largest:
     """The largest movement, as the results have it: ``39.7 um at pinion``; of a place without a name if it is clearly
     larger there.
     """
     units = Units.of(results.model)
-    best, text = 0.0, f"0 {units.length}"
+    best = Largest(0.0, f"0 {units.length}", 0.0)
     for mark in drawing.marks:
         part = results[mark.name].in_case(case)
         for name, word in (("deflection", ""), ("axial", " axial")):
             value = abs(part.value(name))
-            if value > best:
-                best, text = value, f"{show(value, units.length)}{word} at {shorten(mark.called, LONGEST_NAME)}"
+            if value > best.value:
+                text = f"{show(value, units.length)}{word} at {shorten(mark.called, LONGEST_NAME)}"
+                made = float(np.sign(part.value(name)) * of_shoulders(results, mark.name)[name][case])
+                best = Largest(value, text, made)
     for name, line in results.lines.items():
         far = int(np.argmax(line.deflection[case]))
         value = float(line.deflection[case, far])
-        if value > CLEARLY * best:
-            best, text = value, f"{show(value, units.length)} at {_station(name, line, far, units.along)}"
-    return text
+        if value > CLEARLY * best.value:
+            plain = value if results.plain is None else float(results.plain.lines[name].deflection[case, far])
+            best = Largest(
+                value, f"{show(value, units.length)} at {_station(name, line, far, units.along)}", value - plain
+            )
+    return best
 
 
 def _station(shaft: str, line: Line, number: int, unit: str) -> str:

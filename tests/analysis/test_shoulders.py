@@ -1,11 +1,14 @@
 """Shoulders in the solution: on and off, where they sit, what is said of them."""
 
+import json
+
 import numpy as np
 import pytest
 
 import fe_shaft as fs
 from fe_shaft.analysis.recovery import solve_once
 from fe_shaft.fem.shoulders import Contour, shoulder_lumps
+from fe_shaft.results.table import shoulder_table
 
 E, G = 210e9, 81e9  # 42CrMo4 of the built-in list
 
@@ -97,3 +100,30 @@ def test_shoulders_are_reached_from_file_and_command_line(tmp_path, capsys):
     assert fs.read(path).shoulders == "on"
     assert main(["compare", str(path), str(path), "--set", "shoulders=off"]) == 0
     assert "shoulders: not written -> off" in capsys.readouterr().out
+
+
+def test_every_result_tells_what_of_it_the_shoulders_make():
+    limit = fs.Limit("tip_slope", of="tip", quantity="slope", max="2 mrad")
+    on, off = (fs.solve(cantilever(STEPPED, [TIP], limits=[limit], shoulders=each)) for each in ("on", "off"))
+    for quantity in ("deflection", "slope", "twist", "axial"):
+        made = on.value(f"tip.{quantity}")[0] - off.value(f"tip.{quantity}")[0]
+        assert made > 0
+        assert on.by_shoulders(f"tip.{quantity}")[0] == pytest.approx(made, rel=1e-12)
+    slope = on.by_shoulders("tip.slope", case=on.cases[0], unit="rad")
+    assert on.verdicts[0].by_shoulders == pytest.approx(slope, rel=1e-12)
+    assert json.loads(on.to_json())["by_shoulders"]["tip"]["slope"] == pytest.approx([slope], rel=1e-12)
+    assert shoulder_table(on).column("slope_mrad")[1] == pytest.approx(1e3 * slope, rel=1e-12)
+    row = next(row for row in str(on).splitlines() if row.startswith("  tip "))
+    assert float(row.split()[-1]) == pytest.approx(1e3 * slope, rel=1e-2)
+    assert f"shoulders: +{1e3 * slope:.3g} mrad" in str(on)
+    share = 100 * on.by_shoulders("tip.deflection")[0] / on.value("tip.deflection")[0]
+    assert f"({share:.2g} %) of the tip's movement" in str(fs.compare(cantilever(STEPPED, [TIP]), on.model))
+
+
+def test_a_shaft_without_shoulders_has_nothing_by_them():
+    smooth = [fs.Segment("one", length="140 mm", diameter="30 mm")]
+    for results in (fs.solve(cantilever(smooth, [TIP])), fs.solve(cantilever(STEPPED, [TIP], shoulders="off"))):
+        assert results.plain is None
+        assert results.by_shoulders("tip.deflection")[0] == 0
+        assert json.loads(results.to_json())["by_shoulders"] is None
+        assert "shoulders add" not in str(results)

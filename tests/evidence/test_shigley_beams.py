@@ -47,7 +47,8 @@ def test_cf24_twist_of_a_stepped_and_bored_shaft() -> None:
     shaft = fs.Shaft("shaft", [rod(*section) for section in sections], material="given")
     held = fs.Pin("held", at="0 m", holds=["radial", "axial", "tilt", "spin"])
     load = fs.Force("torque", at="shaft.right", couple={"axial": text(case.given("T"), "N m")})
-    twist = fs.solve(fs.Model("stepped shaft", [shaft, held, load], materials=[material], shoulders="off")).case()["torque"].twist
+    model = fs.Model("stepped shaft", [shaft, held, load], materials=[material], shoulders="off")
+    twist = fs.solve(model).case()["torque"].twist
     polar = [math.pi / 32 * (outer**4 - bore**4) for _, outer, bore in sections]
     terms = [length / j for (length, _, _), j in zip(sections, polar, strict=True)]
     agree(twist, case.given("T") / case.given("G") * sum(terms))

@@ -13,7 +13,7 @@ import fe_shaft as fs
 from fe_shaft.io.export import export
 from tests.results.shafts import beam, hostile, layshaft
 
-TABLES = ["movement.csv", "forces.csv", "stations.csv", "results.json", "model.toml"]
+TABLES = ["movement.csv", "forces.csv", "stations.csv", "shoulders.csv", "results.json", "model.toml"]
 
 
 @pytest.fixture(scope="module")
@@ -26,7 +26,7 @@ def test_everything_is_written_and_named(results, tmp_path):
     written = export(results, folder, fs.compare(layshaft()))
     assert sorted(written) == sorted(folder.iterdir())  # nothing half-written beside them
     names = [path.name for path in written]
-    assert names[-6:] == [*TABLES, "comparison.csv"]
+    assert names[-7:] == [*TABLES, "comparison.csv"]
     for case in results.cases:
         assert {f"line_{case}.vtu", f"surface_{case}.vtu"} <= set(names)
     assert {"line_cases.pvd", "surface_cases.pvd"} <= set(names)

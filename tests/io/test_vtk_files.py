@@ -61,6 +61,7 @@ def test_line_holds_every_station_and_its_values(written, case):
         "slope [rad]": line.slope[case],
         "axial movement [m]": line.u[case, :, 0],
         "twist [rad]": line.u[case, :, 3],
+        "displacement by shoulders [m]": (line.u - results.plain.lines["layshaft"].u)[case, :, :3],
         "section force left [N]": line.force_left[case, :, :3],
         "section force right [N]": line.force_right[case, :, :3],
         "section moment left [N m]": line.force_left[case, :, 3:],

@@ -9,6 +9,7 @@ import numpy as np
 from numpy.typing import NDArray
 
 from fe_shaft.model.support import Bearing
+from fe_shaft.results.of_shoulders import of_shoulders
 from fe_shaft.results.words.band import cares, holds
 from fe_shaft.results.words.layout import Column, fitting, on_the_point, paragraph, shortened, table
 from fe_shaft.results.words.page import Page
@@ -28,13 +29,14 @@ def comparison_lines(comparison: Comparison, k: int) -> list[list[str]]:
     """Blocks of lines for one case."""
     view = View(comparison, Page.of(comparison.right), k)
     if not comparison.is_pins:
-        return [_changes(comparison), _moved(view), _table(view), _verdicts(view)]
+        return [_changes(comparison), [*_moved(view), *_shoulders(view)], _table(view), _verdicts(view)]
     if not any(isinstance(support, Bearing) for support in comparison.right.model.supports):
         return [
             ["Every support is a rigid pin already: there is nothing to compare."],
             paragraph(holds(view), "  ", first=""),
         ]
-    return [paragraph(_answer(view)), _table(view), [*paragraph(holds(view), "  ", first=""), *cares(view)]]
+    answer = [*paragraph(_answer(view)), *_shoulders(view)]
+    return [answer, _table(view), [*paragraph(holds(view), "  ", first=""), *cares(view)]]
 
 
 # ---- the first sentence
@@ -62,6 +64,27 @@ def _answer(view: View) -> str:
     ]
     makes = [f"{who} make {', '.join(told)}"] if told else []
     return f"{head}{'; '.join([*makes, *less])}."
+
+
+def _shoulders(view: View) -> list[str]:
+    """What of the main movements the shoulders make, on either side."""
+    names, told = view.page.names(40), []
+    sides = [side for side in (view.comparison.left, view.comparison.right) if side.plain is not None]
+    if not sides:
+        return []
+    where, between = (" on pins and on bearings:", " and ") if view.comparison.is_pins else ("", ", then ")
+    if len(sides) == 1:
+        where = f" in the {view.title(int(view.comparison.left.plain is None))} model"
+    for row in view.main_rows():
+        made = [float(of_shoulders(side, row.part)["deflection"][view.k]) for side in sides]
+        shares = [
+            f"{view.value(row, one)} ({percent(one / whole)})"
+            for one, side in zip(made, sides, strict=True)
+            if (whole := float(side.parts[row.part].deflection[view.k]))
+        ]
+        if shares:
+            told.append(f"{between.join(shares)} of the {names[row.part]}'s movement")
+    return paragraph(f"Shoulders make{where} {'; '.join(told)}.") if told else []
 
 
 # ---- the table

@@ -13,6 +13,7 @@ from fe_shaft.model.case import ONLY_CASE
 from fe_shaft.model.groups import noun
 from fe_shaft.model.support import Bearing
 from fe_shaft.results.movement import SupportMovement
+from fe_shaft.results.of_shoulders import of_shoulders
 from fe_shaft.results.words.layout import Column, fitting, shortened, table
 from fe_shaft.results.words.page import Page
 from fe_shaft.results.words.wording import NOTHING, clock_hours, is_level, number
@@ -83,12 +84,24 @@ def movement(page: Page, shaft: str, k: int) -> list[str]:
         cells.column("slope", "angle", [part.slope for part in parts]),
         cells.column("twist", "angle", [part.twist for part in parts], sign=True),
         cells.column("tilt", "angle", tilts),
+        *_by_shoulders(page, shaft, k, cells),
     ]
     moving = [n for n in range(len(parts)) if any(column.cells[n] not in ("", "0") for column in columns[1:])]
     if not moving:
         return [f"Nothing moves on {page.names(40)[shaft]}."]
     columns = [replace(column, cells=tuple(column.cells[n] for n in moving)) for column in columns]
     return _drawn(page, "Movement", shaft, k, [page.on[shaft][n] for n in moving], columns)
+
+
+def _by_shoulders(page: Page, shaft: str, k: int, cells: Cells) -> list[Column]:
+    """How much of the radial movement and of the slope is the shoulders' doing; nothing where none counts."""
+    if page.results.plain is None:
+        return []
+    made = [of_shoulders(page.results, name) for name in page.on[shaft]]
+    return [
+        cells.column("shoulders", "length", [float(of["deflection"][k]) for of in made], sign=True),
+        cells.column("add", "angle", [float(of["slope"][k]) for of in made], sign=True),
+    ]
 
 
 def forces(page: Page, shaft: str, k: int) -> list[str]:

@@ -31,6 +31,7 @@ _VERB = {
     "tilt": ("tilts", ""),
     "force": ("carries", ""),
 }
+SAME = 5e-4  # relative: no difference in three digits
 _UNJUDGED = "No limit is written, so nothing is judged."
 
 
@@ -188,13 +189,19 @@ def _with_alone(page: Page, verdicts: Sequence[Verdict], lines: list[str]) -> li
     out = lines[:1]
     for verdict, line in zip(verdicts, lines[1:], strict=True):
         out.append(line)
-        alone = verdict.shaft_alone
-        if alone is None or abs(alone - verdict.value) <= 5e-4 * abs(verdict.value):
-            continue
-        value = show(alone, page.shown.unit(verdict.quantity))
-        use = number(verdict.use_of(alone), "")
-        out.append(f"    counting {verdict.counting}; the shaft alone (rigid pins): {value}, use {use}")
+        told = list(_parts_of(verdict, page.shown.unit(verdict.quantity)))
+        if told:
+            out += paragraph("; ".join([f"counting {verdict.counting}", *told]), "      ", first="    ")
     return out
+
+
+def _parts_of(verdict: Verdict, unit: str) -> Iterator[str]:
+    """What of a value is the shaft's and what the shoulders', where either differs in three digits."""
+    alone, shoulders = verdict.shaft_alone, verdict.by_shoulders
+    if alone is not None and abs(alone - verdict.value) > SAME * abs(verdict.value):
+        yield f"shaft alone (rigid pins): {show(alone, unit)}, use {number(verdict.use_of(alone), '')}"
+    if shoulders is not None and abs(shoulders) > SAME * abs(verdict.value):
+        yield f"shoulders: {number(shoulders, unit, sign=True)} {unit}"
 
 
 def _mixes(page: Page, verdicts: Sequence[Verdict]) -> list[str]:
