@@ -12,7 +12,7 @@ from numpy.typing import NDArray
 from fe_shaft.analysis.load_words import misfit_sentence, pulled_stop_sentence
 from fe_shaft.analysis.proof import prove
 from fe_shaft.analysis.reactions import Reactions, reactions
-from fe_shaft.analysis.shouldering import range_remarks
+from fe_shaft.analysis.shoulder_notes import shoulder_notes
 from fe_shaft.analysis.solution import Solved, counted_twist, solve_model
 from fe_shaft.errors import LoadError
 from fe_shaft.fem.dofs import NDOF, RX, UX
@@ -55,7 +55,7 @@ def solve_once(model: Model) -> Results:
         parts=PartsFound(tuple(model.places), partial(_part, solved, carried, u)),
         actions=solved.actions,
         proof=proof,
-        balances=(*_balance_notes(solved), *_shoulder_notes(model)),
+        balances=(*_balance_notes(solved), *shoulder_notes(model)),
         solve_plain=None if solved.grid.pieces.lumps is None else lambda: solve_once(model.plain()),
     )
 
@@ -136,13 +136,3 @@ def _balance_notes(solved: Solved) -> Iterator[Note]:
                 f"{names[k]}.leaves",
                 f"case {names[k]}: {torque} taken out at {balance.part} so that the torques on {balance.shaft} balance",
             )
-
-
-def _shoulder_notes(model: Model) -> Iterator[Note]:
-    """Shoulders beyond the range of their rule."""
-    if model.shoulders == "off":
-        return
-    for shaft in model.shafts:
-        for number, words in range_remarks(model.segment_arrays[shaft.name]):
-            segment = shaft.segments[number].name or f"segment_{number + 1}"
-            yield Note("shoulders", f"{shaft.name}.{segment}: {words}")

@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterator
 from typing import TYPE_CHECKING, NamedTuple
 
 import numpy as np
@@ -10,7 +9,7 @@ from numpy.typing import NDArray
 
 from fe_shaft.fem.pieces import Points
 from fe_shaft.fem.section import cowper
-from fe_shaft.fem.shoulders import Contour, ShoulderLumps, out_of_range, shoulder_lumps
+from fe_shaft.fem.shoulders import Contour, ShoulderLumps, shoulder_lumps
 
 if TYPE_CHECKING:
     from fe_shaft.model.shaft import SegmentArrays
@@ -42,27 +41,6 @@ def shoulders_of(arrays: SegmentArrays) -> ShoulderLumps:
         arrays.memo["shoulders"] = shoulder_lumps(contour_of(arrays))
     lumps: ShoulderLumps = arrays.memo["shoulders"]
     return lumps
-
-
-#: What is said of shoulders beyond the rule's range, by the fields of `OutOfRange`.
-BEYOND = {
-    "end_disc": "a thin disc ends the shaft: up to a third too stiff where it is loaded or held",
-    "flange": "a thin flange: up to a third too stiff where it is loaded or held",
-    "hollow_groove": "a narrow groove of a hollow shaft: 5 to 9 % too stiff",
-    "large_step": "a step beyond D/d = 3: outside what the rule was fitted to",
-}
-
-
-def range_remarks(arrays: SegmentArrays) -> Iterator[tuple[int, str]]:
-    """Segments whose shoulders leave the range of the rule, and what that means."""
-    if "beyond" not in arrays.memo:
-        found = out_of_range(contour_of(arrays))
-        arrays.memo["beyond"] = [
-            (segment, words)
-            for field, words in BEYOND.items()
-            for segment in np.flatnonzero(getattr(found, field).any(axis=-1)).tolist()
-        ]
-    yield from arrays.memo["beyond"]
 
 
 def no_lumps(n_pieces: int) -> Points:

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterable, Iterator
+from collections.abc import Iterator, Sequence
 from typing import TYPE_CHECKING, Any
 
 from fe_shaft.model.notes import Note
@@ -18,10 +18,11 @@ if TYPE_CHECKING:
 _ESTIMATES = "estimates"  # key of the note that the block of estimates says in full
 
 
-def taken_and_notes(model: Model, balances: Iterable[Note]) -> tuple[tuple[Note, ...], tuple[Note, ...]]:
+def taken_and_notes(model: Model, balances: Sequence[Note]) -> tuple[tuple[Note, ...], tuple[Note, ...]]:
     """Notes on what is not written, and all other notes."""
     told = [*twist_notes(model), *(note for note in model.notes if note.key != _ESTIMATES), *balances]
-    taken = tuple(note for note in told if not _is_written(model, note.key))
+    doubts = [note for note in balances if note.key == "shoulders"]  # the switch itself is among the model's notes
+    taken = tuple(note for note in told if note not in doubts and not _is_written(model, note.key))
     return taken, tuple(note for note in told if note not in taken)
 
 

@@ -2,6 +2,6 @@
 
 from fe_shaft.fem.shoulders.contour import Contour
 from fe_shaft.fem.shoulders.lumps import ShoulderLumps, shoulder_lumps
-from fe_shaft.fem.shoulders.range import OutOfRange, out_of_range
+from fe_shaft.fem.shoulders.range import OutOfRange, hollow_shoulders, out_of_range
 
-__all__ = ["Contour", "OutOfRange", "ShoulderLumps", "out_of_range", "shoulder_lumps"]
+__all__ = ["Contour", "OutOfRange", "ShoulderLumps", "hollow_shoulders", "out_of_range", "shoulder_lumps"]

@@ -45,6 +45,15 @@ def out_of_range(contour: Contour) -> OutOfRange:
     return OutOfRange(*(of.reshape(*contour.shape, 2) for of in found))
 
 
+def hollow_shoulders(contour: Contour) -> tuple[Array, Array]:
+    """Where one contour (n,) steps and is bored on either side, and the smaller diameters there, (k,) each."""
+    joint = joined(contour.flat)
+    length, d1, d2, b1, b2, *_ = (of[0] for of in (contour.flat if joint is None else joint.contour).arrays)
+    step = (d2[:-1] != d1[1:]) | (b2[:-1] != b1[1:])
+    step &= ((b2[:-1] > 0) | (b1[1:] > 0)) & (length[1:] > 0)
+    return np.cumsum(length)[:-1][step], np.minimum(d2[:-1], d1[1:])[step]
+
+
 def _of_joined(contour: Contour) -> OutOfRange:
     at = neighbours(contour)
     step = at.next_diameter / at.diameter
