@@ -21,6 +21,7 @@ _HOME = {
         (
             "BeltPull",
             "Bearing",
+            "Body",
             "Case",
             "Couple",
             "Coupling",
@@ -28,6 +29,7 @@ _HOME = {
             "Gear",
             "Helix",
             "Housing",
+            "Keyway",
             "Limit",
             "Mass",
             "Material",
@@ -38,6 +40,7 @@ _HOME = {
             "Seat",
             "Segment",
             "Shaft",
+            "Spline",
             "Sprocket",
             "Stiffness",
         ),

@@ -8,6 +8,7 @@ from __future__ import annotations
 
 from bisect import bisect_left
 from collections.abc import Iterable, Mapping, Sequence
+from dataclasses import replace
 from itertools import accumulate
 from typing import TYPE_CHECKING, Any, NamedTuple
 
@@ -15,7 +16,7 @@ import numpy as np
 from numpy.typing import NDArray
 
 from fe_shaft.analysis.shouldering import lumps_in_pieces, no_lumps
-from fe_shaft.fem.pieces import CONE_RATIO, Pieces, Points, Sections
+from fe_shaft.fem.pieces import CONE_RATIO, Outline, Pieces, Points, Sections
 
 if TYPE_CHECKING:
     from fe_shaft.model.actions import Action
@@ -93,7 +94,8 @@ class _Laid(NamedTuple):
 
 def _lay(model: Model, shaft: Shaft, stations: list[float]) -> _Laid:
     """Cut one shaft at its stations, and its cones into short ones."""
-    arrays, bounds = model.segment_arrays[shaft.name], shaft.ends
+    arrays = model.working_arrays[shaft.name]
+    bounds = arrays.ends
     same = SAME_PLACE * float(bounds[-1])
     wanted = _distinct(stations, same)
     cuts = _distinct([*wanted, *_cone_cuts(arrays, bounds)], same) if arrays.tapered else wanted
@@ -192,7 +194,7 @@ def _cat(arrays: list[NDArray[Any]]) -> NDArray[Any]:
 
 
 def _pieces(model: Model, laid: list[_Laid], span_left: Array, n_pieces: int, hanging: tuple[int, ...]) -> Pieces:
-    arrays = [model.segment_arrays[shaft.name] for shaft in model.shafts]
+    arrays = [model.working_arrays[shaft.name] for shaft in model.shafts]
     shifts = accumulate((len(part.segment) for part in laid), initial=0)
     starts = _cat([_shifted(part.station[:-1], shift) for part, shift in zip(laid, shifts, strict=False)])
     counts = np.concatenate([starts[1:], [n_pieces]]) - starts
@@ -231,13 +233,22 @@ def _shifted(numbers: Ints, shift: int) -> Ints:
 
 
 def _sections(arrays: list[SegmentArrays]) -> Sections:
+    worked = _worked_sections(arrays)
+    if all(of.drawn is None for of in arrays):
+        return worked
+    outlines = [of.outline for of in arrays]
+    return replace(worked, drawn=Outline(*(np.concatenate(side) for side in zip(*outlines, strict=True))))
+
+
+def _worked_sections(arrays: list[SegmentArrays]) -> Sections:
     if len(arrays) == 1:
         (of,) = arrays
         material = [getattr(of, name)[: 1 if of.uniform else None] for name in _MATERIAL]
         return Sections(of.diameter_left, of.diameter_right, of.bore_left, of.bore_right, *material)
-    return Sections(
-        **{name: np.concatenate([getattr(a, name) for a in arrays]) for name in Sections.__dataclass_fields__}
-    )
+    outlines = (Outline(of.diameter_left, of.diameter_right, of.bore_left, of.bore_right) for of in arrays)
+    d_left, d_right, b_left, b_right = (np.concatenate(side) for side in zip(*outlines, strict=True))
+    material = [np.concatenate([getattr(of, name) for of in arrays]) for name in _MATERIAL]
+    return Sections(d_left, d_right, b_left, b_right, *material)
 
 
 _MATERIAL = ("youngs_modulus", "shear_modulus", "poisson_ratio", "density", "shear_coefficient")

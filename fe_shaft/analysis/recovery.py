@@ -75,7 +75,21 @@ def _part(solved: Solved, carried: Reactions, u: Array, name: str) -> Movement[A
     along = np.cross(X_AXIS, towards)
     point = part.reference_diameter / 2 * towards
     sense = np.array([case.sense or 1.0 for case in solved.model.cases])  # where nothing turns: clockwise from left
-    return GearMovement(name, own, load, _triple(point), _triple(towards), _triple(along), sense)
+    body = _body_give(solved, part)
+    return GearMovement(name, own + body, load, body, _triple(point), _triple(towards), _triple(along), sense)
+
+
+def _body_give(solved: Solved, gear: Gear) -> Array:
+    """How far a gear's tooth force moves its rim against its shaft, (n_cases, 6) [m, rad]; its weight does not count.
+
+    The shaft itself does not feel it: it carries the same force, wherever the rim goes.
+    """
+    forces = (a.wrench for a in solved.actions if a.part == gear.name and a.kind == "tooth force")
+    force = sum(forces, start=np.zeros((len(solved.model.cases), NDOF)))
+    if gear.body is None:
+        return np.zeros_like(force)
+    radial, tilt = gear.body.give
+    return np.asarray(force * np.array([0.0, radial, radial, 0.0, tilt, tilt]))
 
 
 def _triple(vector: Array) -> tuple[float, float, float]:

@@ -34,8 +34,8 @@ def shoulder_notes(model: Model) -> Iterator[Note]:
     if model.shoulders == "off":
         return
     for shaft in model.shafts:
-        arrays = model.segment_arrays[shaft.name]
-        for number, words in _remarks(arrays):
+        arrays = model.working_arrays[shaft.name]
+        for number, words in dict.fromkeys(_drawn_numbers(arrays)):
             segment = shaft.segments[number].name or f"segment_{number + 1}"
             yield Note("shoulders", f"{shaft.name}.{segment}: {words}")
         if not (arrays.bore_left.any() or arrays.bore_right.any()):
@@ -48,6 +48,12 @@ def shoulder_notes(model: Model) -> Iterator[Note]:
                 f"{told}: within {NEAR} diameters of a shoulder of a hollow shaft; "
                 "movement there is off by 2 % as a rule, 12 % at worst",
             )
+
+
+def _drawn_numbers(arrays: SegmentArrays) -> Iterator[tuple[int, str]]:
+    """The remarks with the numbers of the segments on the drawing."""
+    for number, words in _remarks(arrays):
+        yield number if arrays.number is None else int(arrays.number[number]), words
 
 
 def _remarks(arrays: SegmentArrays) -> list[tuple[int, str]]:

@@ -7,9 +7,10 @@ from typing import TYPE_CHECKING
 
 from fe_shaft.analysis.bands import solve_mixes
 from fe_shaft.analysis.recovery import solve_once
-from fe_shaft.analysis.verdicts import judge
+from fe_shaft.analysis.verdicts import Beside, judge
 from fe_shaft.errors import FreeMotionError, LoadError, SolutionError, UsageError, wrong_kind
 from fe_shaft.model.differences import differences
+from fe_shaft.model.hub import NONE, ONE_PIECE
 from fe_shaft.results.comparison import Comparison, common_rows
 
 if TYPE_CHECKING:
@@ -35,7 +36,14 @@ def solve(model: Model) -> Results:
     results = solve_once(model)
     if not model.limits:
         return results
-    return replace(results, verdicts=judge(results, _on_pins(model), solve_mixes(model)))
+    return replace(results, verdicts=judge(results, Beside(_on_pins(model), solve_mixes(model), _hubs(model))))
+
+
+def _hubs(model: Model) -> tuple[Results, Results] | None:
+    """The model with no hub carrying, and with all of them in one piece with their shafts."""
+    if not (model.hubs and model.limits):
+        return None
+    return solve_once(model.with_hubs(NONE)), solve_once(model.with_hubs(ONE_PIECE))
 
 
 def _require_model(verb: str, given: object) -> None:
@@ -74,7 +82,7 @@ def compare(model: Model, other: Model | None = None) -> Comparison:
             f'on rigid pins, {error}\n  (A pin holds what "holds" says; a stiffness that is not held is none there.)'
         ) from None
     mixes = solve_mixes(model)
-    results = replace(results, verdicts=judge(results, left, mixes))
+    results = replace(results, verdicts=judge(results, Beside(left, mixes, _hubs(model))))
     return Comparison(left, results, ("pins", "bearings"), common_rows(left, results, mixes), mixes)
 
 

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Sequence
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 import numpy as np
 from numpy.typing import NDArray
@@ -18,12 +18,27 @@ if TYPE_CHECKING:
 Array = NDArray[np.float64]
 
 
-def judge(results: Results, pins: Results | None, mixes: Mixes | None) -> tuple[Verdict, ...]:
+class Beside(NamedTuple):
+    """What limits are held against besides the results themselves.
+
+    Attributes
+    ----------
+    pins : on rigid pins, None where they cannot hold the shaft
+    mixes : at the ends of all estimates, None where nothing is estimated
+    hubs : with no hub carrying, and with all in one piece with their shafts; None without hubs
+    """
+
+    pins: Results | None
+    mixes: Mixes | None
+    hubs: tuple[Results, Results] | None
+
+
+def judge(results: Results, beside: Beside) -> tuple[Verdict, ...]:
     """Hold all limits of a model against its results."""
-    return tuple(_judge(limit, results, pins, mixes) for limit in results.model.limits)
+    return tuple(_judge(limit, results, beside) for limit in results.model.limits)
 
 
-def _judge(limit: Limit, results: Results, pins: Results | None, mixes: Mixes | None) -> Verdict:
+def _judge(limit: Limit, results: Results, beside: Beside) -> Verdict:
     model = results.model
     parts = list(model.targets(limit.name))
     cases = [results.case_number(name) for name in model.limit_cases(limit.name)]
@@ -32,10 +47,10 @@ def _judge(limit: Limit, results: Results, pins: Results | None, mixes: Mixes | 
     used = bounds.use(values)
     part, case = (int(k) for k in np.unravel_index(used.argmax(), used.shape))
 
-    def beside(other: Results | None) -> float | None:
-        return None if other is None else float(bounds.values(other, parts, cases)[part, case])
+    def at(other: Results) -> float:
+        return float(bounds.values(other, parts, cases)[part, case])
 
-    plain = beside(results.plain)
+    plain, pins, hubs = results.plain, beside.pins, beside.hubs
     return Verdict(
         limit=limit.name,
         part=parts[part],
@@ -48,9 +63,10 @@ def _judge(limit: Limit, results: Results, pins: Results | None, mixes: Mixes | 
         per_case={results.cases[c]: float(used[:, k].max()) for k, c in enumerate(cases)},
         source=limit.source or "",
         counting=limit.counting,
-        band=None if mixes is None else _band(bounds, mixes, parts, cases),
-        shaft_alone=beside(pins),
-        by_shoulders=None if plain is None else float(values[part, case]) - plain,
+        band=None if beside.mixes is None else _band(bounds, beside.mixes, parts, cases),
+        shaft_alone=None if pins is None else at(pins),
+        by_shoulders=None if plain is None else float(values[part, case]) - at(plain),
+        hubs=None if hubs is None else (at(hubs[0]), at(hubs[1])),
     )
 
 

@@ -21,6 +21,15 @@ GAUSS_CYLINDER = np.polynomial.legendre.leggauss(3)
 GAUSS_CONE = np.polynomial.legendre.leggauss(8)
 
 
+class Outline(NamedTuple):
+    """Diameters and bores at both ends of every segment, (n,) each [m]."""
+
+    diameter_left: Array
+    diameter_right: Array
+    bore_left: Array
+    bore_right: Array
+
+
 @dataclass(frozen=True)
 class Sections:
     """Segments of all shafts, one after the other, (n,) each; material figures may be (1,) where all are the same.
@@ -32,6 +41,8 @@ class Sections:
     poisson_ratio, density : [-], [kg/m^3]
     shear_coefficient : [-]
         NaN: Cowper's of the section; infinite: no shear deformation.
+    drawn : Outline, optional
+        What weighs and is drawn, where the segments work by other diameters.
     """
 
     diameter_left: Array
@@ -43,6 +54,7 @@ class Sections:
     poisson_ratio: Array
     density: Array
     shear_coefficient: Array
+    drawn: Outline | None = None
 
     @cached_property
     def flexibility_rates(self) -> Array:
@@ -172,14 +184,26 @@ class Pieces:
         return self._along(self.sections.bore_left, self.sections.bore_right, self.share_right)
 
     @cached_property
+    def drawn(self) -> Outline:
+        """Outline of the pieces themselves as drawn, (m,) each [m]."""
+        if self.sections.drawn is None:
+            return Outline(self.diameter_left, self.diameter_right, self.bore_left, self.bore_right)
+        of = self.sections.drawn
+        sides = (self.share_left, self.share_right if self.tapered else None)
+        return Outline(
+            *(self._along(of.diameter_left, of.diameter_right, share) for share in sides),
+            *(self._along(of.bore_left, of.bore_right, share) for share in sides),
+        )
+
+    @cached_property
     def mass_per_length(self) -> tuple[Array, Array, Array]:
         """Coefficients of 1, eta, eta^2 of the mass per length, (m,) each [kg/m, kg/m^2, kg/m^3]."""
         scale = self._of_segment(self.sections.density) * (np.pi / 4)
-        d, b = self.diameter_left, self.bore_left
+        d, d_right, b, b_right = self.drawn
         c0 = scale * (d - b) * (d + b)
         if not self.tapered:
             return c0, np.zeros_like(c0), np.zeros_like(c0)
-        grow_d, grow_b = (self.diameter_right - d) / self.length, (self.bore_right - b) / self.length
+        grow_d, grow_b = (d_right - d) / self.length, (b_right - b) / self.length
         return c0, 2 * scale * (d * grow_d - b * grow_b), scale * (grow_d**2 - grow_b**2)
 
     @cached_property

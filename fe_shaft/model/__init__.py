@@ -1,5 +1,6 @@
 """What the engineer describes: shafts, supports, gears, loads, cases, limits, and the whole model."""
 
+from fe_shaft.model.body import Body
 from fe_shaft.model.case import Case
 from fe_shaft.model.frame import Frame
 from fe_shaft.model.gear import Gear
@@ -16,9 +17,11 @@ from fe_shaft.model.shaft import SegmentArrays, Shaft
 from fe_shaft.model.stiffness import Matrix, MatrixUnits, Seat, Stiffness
 from fe_shaft.model.support import Bearing, Pin, Support
 from fe_shaft.model.system import Model
+from fe_shaft.model.weakening import Keyway, Spline
 
 __all__ = [
-    "Bearing", "BeltPull", "Case", "Couple", "Coupling", "Estimates", "Force", "Frame", "Gear", "Heading", "Helix",
-    "Housing", "Limit", "Mass", "Material", "Matrix", "MatrixUnits", "Model", "Note", "OutputUnits", "Pin", "Place",
-    "Position", "Pulley", "Seat", "Segment", "SegmentArrays", "Shaft", "Sprocket", "Stiffness", "Support",
+    "Bearing", "BeltPull", "Body", "Case", "Couple", "Coupling", "Estimates", "Force", "Frame", "Gear", "Heading",
+    "Helix", "Housing", "Keyway", "Limit", "Mass", "Material", "Matrix", "MatrixUnits", "Model", "Note", "OutputUnits",
+    "Pin", "Place", "Position", "Pulley", "Seat", "Segment", "SegmentArrays", "Shaft", "Spline", "Sprocket",
+    "Stiffness", "Support",
 ]  # fmt: skip

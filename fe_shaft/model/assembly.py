@@ -25,6 +25,8 @@ from fe_shaft.model.position import Place
 from fe_shaft.model.shaft import SegmentArrays, Shaft
 from fe_shaft.model.support import Support
 from fe_shaft.model.words import Fault, Named
+from fe_shaft.model.working import collar_of, thickest
+from fe_shaft.units import show
 
 Array = NDArray[np.float64]
 _MODEL_KEYS = frozenset((*Heading.model_fields, *GROUPS))  # no names for parts
@@ -71,6 +73,7 @@ class Assembly:
         if not self.faults and not self.draft.faults:
             self.frames = {name: frame_of(shaft) for name, shaft in self.shafts.items()}
             self.segment_arrays = {name: shaft.arrays(self.materials) for name, shaft in self.shafts.items()}
+            self._hubs()
 
     def tell(self, noun_: Named, key: str | None, sentence: str) -> None:
         """Note a mistake at a key of a noun, or in the whole of it."""
@@ -172,6 +175,22 @@ class Assembly:
                     self.centres[part.name] = x
         self.faults += placing.faults
         self.placing = placing
+
+    def _hubs(self) -> None:
+        """A hub that is to carry must reach out of its shaft."""
+        for part in self.parts.values():
+            arrays = self.segment_arrays[self.places[part.name].shaft]
+            collar = collar_of(part, self.places[part.name], float(arrays.ends[-1]))
+            if collar is None or not collar.share:
+                continue
+            shaft = thickest(arrays, collar.left, collar.right)
+            if collar.diameter <= shaft:
+                self.tell(
+                    part,
+                    "hub",
+                    f"the hub is {show(collar.diameter, 'mm', 4)} thick and the shaft in it {show(shaft, 'mm', 4)}, so "
+                    'nothing of it can carry. Write hub = "none", or the right hub_diameter.',
+                )
 
     # ---- cases
 

@@ -2,11 +2,12 @@
 
 import math
 from collections.abc import Iterator
-from typing import TYPE_CHECKING, Annotated, ClassVar, Unpack
+from typing import TYPE_CHECKING, Annotated, ClassVar, Literal, Self, Unpack
 
 from pydantic import Field
 from typing_extensions import override
 
+from fe_shaft.model.body import Body
 from fe_shaft.model.clock import Direction
 from fe_shaft.model.helix import Helix, HelixWords
 from fe_shaft.model.kinds import Choice, Count
@@ -19,6 +20,7 @@ if TYPE_CHECKING:
     from fe_shaft.model.keywords import GearWords
 
 PRESSURE_ANGLE = "20 deg"  # ISO 53, standard basic rack
+DEDENDUM = 1.25  # ISO 53, profile A, in modules; from memory
 _BEVEL = ("pitch_cone_angle", "apex", "mean_diameter")
 
 
@@ -72,6 +74,11 @@ class Gear(Heavy):
         default=None,
         description="Bevel gears: pitch diameter at the middle of the face, instead of teeth and module.",
         examples=["90 mm"],
+    )
+    body: Body | None = Field(
+        default=None,
+        description="How the gear's rim gives way against its shaft through web and hub; left out, it is rigid.",
+        examples=[{"radial": "~900 N/um", "tilt": "~150 N m/mrad"}],
     )
     width_key: ClassVar[str | None] = "facewidth"
 
@@ -159,6 +166,25 @@ class Gear(Heavy):
         assert self.teeth is not None
         assert self.normal_module is not None
         return self.teeth * self.normal_module.si / math.cos(self.helix_angle)
+
+    @property
+    def root_diameter(self) -> float | None:
+        """Root diameter [m] of a cylindrical gear by the basic rack of ISO 53, m_n z / cos(beta) - 2.5 m_n."""
+        if self.form != "cylindrical" or self.teeth is None or self.normal_module is None:
+            return None
+        return self.reference_diameter - 2 * DEDENDUM * self.normal_module.si
+
+    @property
+    @override
+    def hub_outside(self) -> float | None:
+        return self.root_diameter if self.hub_diameter is None else self.hub_diameter.si
+
+    @override
+    def at_end(self, which: Literal["low", "high"]) -> Self:
+        moved = super().at_end(which)
+        if moved.body is None:
+            return moved
+        return type(self).model_construct(set(moved.given), **{**moved.__dict__, "body": moved.body.at_end(which)})
 
     @property
     def width_si(self) -> float | None:

@@ -59,6 +59,37 @@ class SegmentWords(TypedDict, total=False):
     fillet_right: Number
     material: str
     shear: Literal["cowper", "none"] | float
+    keyway: Any
+    spline: Any
+
+
+class KeywayWords(TypedDict, total=False):
+    """Words of `Keyway`."""
+
+    range_check: Literal["off"]
+    source: str
+    effective_diameter: Number
+    width: Required[Number]
+    depth: Required[Number]
+    count: int
+
+
+class SplineWords(TypedDict, total=False):
+    """Words of `Spline`."""
+
+    range_check: Literal["off"]
+    source: str
+    effective_diameter: Number
+    root_diameter: Required[Number]
+
+
+class BodyWords(TypedDict, total=False):
+    """Words of `Body`."""
+
+    range_check: Literal["off"]
+    source: str
+    radial: Number
+    tilt: Number
 
 
 class ShaftWords(TypedDict, total=False):
@@ -130,6 +161,9 @@ class GearWords(TypedDict, total=False):
     cg_at: Number | Position
     cg_radius: Number
     cg_angle: Number
+    hub: Literal["none", "one piece"] | float
+    hub_diameter: Number
+    hub_length: Number
     teeth: int
     normal_module: Number
     pitch_diameter: Number
@@ -142,6 +176,7 @@ class GearWords(TypedDict, total=False):
     pitch_cone_angle: Number
     apex: Literal["left", "right"]
     mean_diameter: Number
+    body: Any
 
 
 class CouplingWords(TypedDict, total=False):
@@ -158,6 +193,9 @@ class CouplingWords(TypedDict, total=False):
     cg_at: Number | Position
     cg_radius: Number
     cg_angle: Number
+    hub: Literal["none", "one piece"] | float
+    hub_diameter: Number
+    hub_length: Number
     spread: Number
 
 
@@ -175,6 +213,9 @@ class SprocketWords(TypedDict, total=False):
     cg_at: Number | Position
     cg_radius: Number
     cg_angle: Number
+    hub: Literal["none", "one piece"] | float
+    hub_diameter: Number
+    hub_length: Number
     spread: Number
     teeth: int
     chain_pitch: Number
@@ -197,6 +238,9 @@ class PulleyWords(TypedDict, total=False):
     cg_at: Number | Position
     cg_radius: Number
     cg_angle: Number
+    hub: Literal["none", "one piece"] | float
+    hub_diameter: Number
+    hub_length: Number
     spread: Number
     diameter: Required[Number]
     belt_pull: Any
@@ -219,6 +263,9 @@ class MassWords(TypedDict, total=False):
     cg_at: Number | Position
     cg_radius: Number
     cg_angle: Number
+    hub: Literal["none", "one piece"] | float
+    hub_diameter: Number
+    hub_length: Number
     spread: Number
 
 

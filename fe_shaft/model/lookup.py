@@ -26,6 +26,8 @@ from fe_shaft.model.position import Place, PositionKind
 from fe_shaft.model.refusal import problem
 from fe_shaft.model.shaft import SegmentArrays, Shaft
 from fe_shaft.model.support import Support
+from fe_shaft.model.words import Named
+from fe_shaft.model.working import collar_of, thickest, working_arrays
 from fe_shaft.units import Value
 
 P = TypeVar("P", bound=Part)
@@ -36,6 +38,7 @@ class Lookup:
     """What can be asked of a model; `Model` makes it."""
 
     heading: Heading
+    parts: tuple[Named, ...]
     supports: tuple[Support, ...]
     _assembly: Assembly
 
@@ -79,7 +82,7 @@ class Lookup:
     @property
     def shafts(self) -> tuple[Shaft, ...]:
         """The shafts, the first of which sets the origin."""
-        return tuple(self._assembly.shafts.values())
+        return tuple(part for part in self.parts if isinstance(part, Shaft))
 
     @property
     def gears(self) -> tuple[Gear, ...]:
@@ -112,13 +115,13 @@ class Lookup:
         return self._of(Mass)
 
     def _of(self, cls: type[P]) -> tuple[P, ...]:
-        return tuple(part for part in self._assembly.parts.values() if isinstance(part, cls))
+        return tuple(part for part in self.parts_on_shafts if isinstance(part, cls))
 
     @cached_property
     def parts_on_shafts(self) -> tuple[Part, ...]:
         """Everything but the shafts; supports with their seats."""
         supports: dict[str, Part] = {support.name: support for support in self.supports}
-        return tuple(supports.get(name, part) for name, part in self._assembly.parts.items())
+        return tuple(supports.get(part.name, part) for part in self.parts if isinstance(part, Part))
 
     @property
     def cases(self) -> tuple[Case, ...]:
@@ -145,7 +148,7 @@ class Lookup:
 
     @cached_property
     def _by_name(self) -> dict[str, Any]:
-        return {**self._assembly.shafts, **{part.name: part for part in self.parts_on_shafts}}
+        return {part.name: part for part in (*self.shafts, *self.parts_on_shafts)}
 
     def __getitem__(self, name: str) -> Any:
         """The shaft or part of that name; ModelError with the nearest name if there is none."""
@@ -186,8 +189,26 @@ class Lookup:
 
     @property
     def segment_arrays(self) -> Mapping[str, SegmentArrays]:
-        """Every shaft in numbers."""
+        """Every shaft in numbers, as drawn."""
         return MappingProxyType(self._assembly.segment_arrays)
+
+    @cached_property
+    def working_arrays(self) -> Mapping[str, SegmentArrays]:
+        """Every shaft in numbers as it works: with its hubs, keyways and splines."""
+        drawn, parts = self._assembly.segment_arrays, self.parts_on_shafts
+        of = {shaft.name: working_arrays(shaft, drawn[shaft.name], parts, self.places) for shaft in self.shafts}
+        return MappingProxyType(of)
+
+    @cached_property
+    def hubs(self) -> tuple[str, ...]:
+        """Names of the parts whose hubs could carry with their shafts: their size is known, and larger."""
+        return tuple(part.name for part in self.parts_on_shafts if self._could_carry(part))
+
+    def _could_carry(self, part: Part) -> bool:
+        place = self.places[part.name]
+        arrays = self._assembly.segment_arrays[place.shaft]
+        collar = collar_of(part, place, float(arrays.ends[-1]))
+        return collar is not None and collar.diameter > thickest(arrays, collar.left, collar.right)
 
     @cached_property
     def gravity_vector(self) -> Array:

@@ -57,9 +57,8 @@ def _defaults(model: Model) -> Iterator[Note]:
     rigid = [part.name for part in model.supports if isinstance(part, Bearing) and part.seat is None]
     if rigid:
         yield Note("housing.seat", f"seats rigid: {_names(rigid)}")
-    if model.gears:
-        yield Note("hub", "gear bodies rigid, not stiffening the shaft")
-        yield Note("mate", "mates stand still")
+    yield from _bodies(model)
+    yield from _weakenings(model)
     default = [shaft.name for shaft in model.shafts if "shear" not in shaft.given]
     if default:
         yield Note(f"{default[0]}.shear", "shear: Cowper")
@@ -82,6 +81,30 @@ def _defaults(model: Model) -> Iterator[Note]:
             yield Note(f"{wheel.name}.pull_factor", f"pull_factor 1: {wheel.name}")
     if any(case.enters_shares and case.leaves_shares for case in model.cases):
         yield Note("efficiency", "efficiency 1")
+
+
+def _bodies(model: Model) -> Iterator[Note]:
+    """Gears and what else sits on the shafts: rigid or not, carrying with them or not."""
+    rigid = [gear.name for gear in model.gears if gear.body is None]
+    if rigid:
+        yield Note(f"{rigid[0]}.body", f"gear bodies rigid: {_names(rigid)}")
+    silent = [name for name in model.hubs if model[name].hub is None]
+    if silent:
+        yield Note(f"{silent[0]}.hub", f"hubs do not stiffen the shaft: {_names(silent)}")
+    if model.gears:
+        yield Note("mate", "mates stand still")
+
+
+def _weakenings(model: Model) -> Iterator[Note]:
+    """Keyways and splines that count by common practice."""
+    for shaft in model.shafts:
+        for address, k in shaft.weakened.items():
+            segment = shaft.segments[k]
+            key, weak = ("keyway", segment.keyway) if segment.keyway is not None else ("spline", segment.spline)
+            if weak is not None and weak.effective_diameter is None:
+                taken = show(weak.counted(segment.diameter.si).effective, "mm")
+                how = f"{key} counts as a diameter of {taken}, {weak.practice}"
+                yield Note(f"{address}.{key}.effective_diameter", f"{how}: {address}")
 
 
 def _is_stepped(shaft: Shaft) -> bool:
@@ -112,7 +135,7 @@ def _supports(model: Model) -> Iterator[Note]:
                 f"{part.name}.offset", f"offset {part.offset.text} = coaxiality zone of {zone} diameter: {part.name}"
             )
     if model.estimated:
-        yield Note("estimates", f"stiffness is estimated (~): {_names(list(model.estimated))}")
+        yield Note("estimates", f"estimated or assumed (~): {_names(list(model.estimated))}")
 
 
 def _unused(part: Bearing) -> Iterator[Note]:

@@ -1,15 +1,16 @@
 """What everything on a shaft has in common: a name, its shaft, its place; for heavy things, a centre of gravity."""
 
 from collections.abc import Iterator
-from typing import Annotated, Any, ClassVar
+from typing import Annotated, Any, ClassVar, Literal, Self
 
 from pydantic import Field
 from typing_extensions import override
 
 from fe_shaft.model.clock import Direction
+from fe_shaft.model.hub import NONE, Hub, hub_end
 from fe_shaft.model.kinds import Kind, Name, Reference, Text, shown
 from fe_shaft.model.position import At
-from fe_shaft.model.quantity import Quantity, Radius, Weight
+from fe_shaft.model.quantity import Diameter, Quantity, Radius, Weight, Width
 from fe_shaft.model.refusal import refuse
 from fe_shaft.model.words import Fault, Named, example_of
 from fe_shaft.units import Value
@@ -59,6 +60,10 @@ class Part(Named):
     def spread_si(self) -> float:
         """Width over which its load is spread [m]; 0 at a point."""
         return 0.0
+
+    def at_end(self, which: Literal["low", "high"]) -> Self:
+        """The same with every estimate at one end of its band."""
+        return self
 
     @property
     def placed_by(self) -> str | None:
@@ -123,6 +128,22 @@ class Heavy(Part):
     cg_angle: Direction | None = Field(
         default=None, description="Direction of its centre of gravity from the axis.", examples=["12 o'clock"]
     )
+    hub: Hub | None = Field(
+        default=None,
+        description="How it stiffens the shaft under it: `none`, in `one piece`, or an assumed share of that.",
+        examples=["one piece", 0.5],
+    )
+    hub_diameter: Diameter | None = Field(
+        default=None,
+        description="Outer diameter of what may work with the shaft; of a cylindrical gear, the root diameter if left "
+        "out.",
+        examples=["60 mm"],
+    )
+    hub_length: Width | None = Field(
+        default=None,
+        description="Length of the hub along the shaft; of a gear, its width if left out.",
+        examples=["40 mm"],
+    )
 
     @override
     def faults_together(self) -> Iterator[Fault]:
@@ -133,3 +154,34 @@ class Heavy(Part):
         if ("cg_radius" in self.given) != ("cg_angle" in self.given):
             there, missing = ("cg_radius", "cg_angle") if "cg_radius" in self.given else ("cg_angle", "cg_radius")
             yield Fault((missing,), f"{missing} is not written, only {there}. Write both, or neither.")
+        yield from self._hub_faults()
+
+    def _hub_faults(self) -> Iterator[Fault]:
+        if self.hub in (None, NONE):
+            return
+        for key, known in (("hub_diameter", self.hub_outside), ("hub_length", self.hub_width)):
+            if known is None and key not in self.given:
+                yield Fault((key,), f"{key} is not written, but hub is. Write {example_of(type(self), key)}.")
+
+    @property
+    def hub_outside(self) -> float | None:
+        """Outer diameter of its hub [m], None if that is not known."""
+        return None if self.hub_diameter is None else self.hub_diameter.si
+
+    @property
+    def hub_width(self) -> float | None:
+        """Length of its hub along the shaft [m], None if that is not known."""
+        return self.width_si if self.hub_length is None else self.hub_length.si
+
+    @property
+    def hub_assumed(self) -> bool:
+        """Whether a share of its hub is assumed to work with the shaft."""
+        return isinstance(self.hub, float)
+
+    def with_hub(self, hub: str) -> Self:
+        """The same with another word for its hub."""
+        return type(self).model_construct(self.given | {"hub"}, **{**self.__dict__, "hub": hub})
+
+    @override
+    def at_end(self, which: Literal["low", "high"]) -> Self:
+        return self.with_hub(hub_end(which)) if self.hub_assumed else self

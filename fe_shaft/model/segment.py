@@ -1,7 +1,7 @@
 """A segment: one cylinder or cone of a shaft, solid or bored."""
 
 from collections.abc import Iterator
-from typing import TYPE_CHECKING, Annotated, Any, ClassVar, Unpack
+from typing import TYPE_CHECKING, Annotated, Any, ClassVar, Literal, Unpack
 
 from pydantic import Field
 from typing_extensions import override
@@ -9,6 +9,7 @@ from typing_extensions import override
 from fe_shaft.model.kinds import Kind, Name, Reference, shown, thing
 from fe_shaft.model.quantity import Bore, Diameter, Fillet, Length
 from fe_shaft.model.refusal import refuse
+from fe_shaft.model.weakening import Keyway, Spline, Weakening
 from fe_shaft.model.words import Fault, Named
 
 if TYPE_CHECKING:
@@ -88,8 +89,44 @@ class Segment(Named):
         default=None, description="Shear of this segment, where it is not the shaft's.", examples=[0.9]
     )
 
+    keyway: Keyway | None = Field(
+        default=None,
+        description="Keyway along the whole segment; cut the segment where it ends.",
+        examples=[{"width": "10 mm", "depth": "5 mm"}],
+    )
+    spline: Spline | None = Field(
+        default=None,
+        description="Splines along the whole segment, whose diameter is that of their tips.",
+        examples=[{"root_diameter": "36 mm"}],
+    )
+
+    @property
+    def weakening(self) -> Weakening | None:
+        """Its keyway or spline."""
+        return self.keyway or self.spline
+
+    def at_end(self, which: Literal["low", "high"]) -> "Segment":
+        """The same with its keyway or spline at one end of its band."""
+        key = "keyway" if self.keyway is not None else "spline"
+        moved = getattr(self, key).at_end(which, self.diameter.si)
+        return Segment.model_construct(set(self.given), **{**self.__dict__, key: moved})
+
     @override
     def faults_together(self) -> Iterator[Fault]:
+        yield from self._wall_faults()
+        yield from self._weakening_faults()
+
+    def _weakening_faults(self) -> Iterator[Fault]:
+        ways = [key for key in ("keyway", "spline") if key in self.given]
+        if len(ways) == 2:
+            yield Fault(("spline",), "spline stands beside keyway. Keep one, or cut the segment in two.")
+        for key in ways:
+            if self.given & {"end_diameter", "end_bore"}:
+                yield Fault((key,), f"a cone carries no {key} here. Cut the segment, or leave the {key} out.")
+            elif getattr(self, key) is not None and self.diameter is not None:
+                yield from getattr(self, key).faults_in(key, self.diameter, self.bore)
+
+    def _wall_faults(self) -> Iterator[Fault]:
         if self.bore is None and self.end_bore is None:
             return
         left, right = self.diameter, self.end_diameter or self.diameter

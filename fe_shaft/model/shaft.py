@@ -3,7 +3,7 @@
 from collections.abc import Iterator, Mapping, Sequence
 from dataclasses import dataclass, field
 from functools import cached_property
-from typing import TYPE_CHECKING, Annotated, Any, ClassVar, Unpack
+from typing import TYPE_CHECKING, Annotated, Any, ClassVar, Literal, NamedTuple, Self, Unpack
 
 import numpy as np
 from numpy.typing import NDArray
@@ -24,8 +24,25 @@ if TYPE_CHECKING:
     from fe_shaft.model.keywords import ShaftWords
 
 Array = NDArray[np.float64]
+Ints = NDArray[np.intp]
 MOST_SEGMENTS = 1_000_000
 AXES = ("+X", "-X", "+Y", "-Y", "+Z", "-Z")
+
+
+class Outline(NamedTuple):
+    """Diameters and bores at both ends of every segment, (n_segments,) each [m]."""
+
+    diameter_left: Array
+    diameter_right: Array
+    bore_left: Array
+    bore_right: Array
+
+    @property
+    def tapered(self) -> bool:
+        """Whether any segment is a cone."""
+        return not (
+            np.array_equal(self.diameter_left, self.diameter_right) and np.array_equal(self.bore_left, self.bore_right)
+        )
 
 
 @dataclass(frozen=True)
@@ -43,6 +60,12 @@ class SegmentArrays:
         NaN: by Cowper from section and Poisson's ratio; inf: no shear deformation.
     fillet_left, fillet_right : (n_segments,) [m]
         Fillets at the segments' ends; one counts where its segment is the thinner one.
+    ends : (n_segments + 1,) [m]
+        Where segments end, from the left end on: the first 0.
+    drawn : Outline, optional
+        The outline as drawn, where hubs, keyways or splines make the shaft work by another one.
+    number : (n_segments,), optional
+        Number of each on the drawing, counted from 0, where hubs cut segments.
     memo : what follows from the geometry alone and is kept for all models that share it
     """
 
@@ -58,6 +81,9 @@ class SegmentArrays:
     shear_coefficient: Array
     fillet_left: Array
     fillet_right: Array
+    ends: Array
+    drawn: Outline | None = None
+    number: Ints | None = None
     memo: dict[str, Any] = field(default_factory=dict, compare=False, repr=False)
 
     @cached_property
@@ -70,10 +96,14 @@ class SegmentArrays:
 
     @cached_property
     def tapered(self) -> bool:
-        """Whether any segment is a cone, outside or inside."""
-        return not (
-            np.array_equal(self.diameter_left, self.diameter_right) and np.array_equal(self.bore_left, self.bore_right)
-        )
+        """Whether any segment is a cone, outside or inside, as drawn or as it works."""
+        own = Outline(self.diameter_left, self.diameter_right, self.bore_left, self.bore_right)
+        return own.tapered or (self.drawn is not None and self.drawn.tapered)
+
+    @property
+    def outline(self) -> Outline:
+        """As drawn."""
+        return self.drawn or Outline(self.diameter_left, self.diameter_right, self.bore_left, self.bore_right)
 
 
 class Vector(Kind):
@@ -225,6 +255,20 @@ class Shaft(Named):
         """Number of each named segment, counted from 0."""
         return {segment.name: index for index, segment in enumerate(self.segments or ()) if segment.name}
 
+    @cached_property
+    def weakened(self) -> dict[str, int]:
+        """Number of every segment with a keyway or a spline, counted from 0, by its address."""
+        found = ((k, segment) for k, segment in enumerate(self.segments or ()) if segment.weakening is not None)
+        return {f"{self.name}.{segment.name or f'segment_{k + 1}'}": k for k, segment in found}
+
+    def at_ends(self, ends: Mapping[str, Literal["low", "high"]]) -> Self:
+        """The same with keyways and splines at ends of their bands, by the addresses of their segments."""
+        moved = {k: ends[address] for address, k in self.weakened.items() if address in ends}
+        if not moved:
+            return self
+        rows = [row.at_end(moved[k]) if k in moved else row for k, row in enumerate(self.segments)]
+        return type(self).model_construct(set(self.given), **{**self.__dict__, "segments": tuple(rows)})
+
     @property
     def _fillets(self) -> dict[str, Array]:
         """Fillets at both ends of the segments (n_segments,) [m]."""
@@ -252,7 +296,7 @@ class Shaft(Named):
         made = {**self.numbers, **columns, "shear_coefficient": np.array(shear, dtype=float), **self._fillets}
         for column in made.values():
             column.setflags(write=False)
-        return SegmentArrays(**made)
+        return SegmentArrays(**made, ends=self.ends)
 
 
 def _size(value: Value | None, default: Value | None) -> float:

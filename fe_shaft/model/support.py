@@ -2,7 +2,7 @@
 
 from collections.abc import Iterator
 from functools import cached_property
-from typing import TYPE_CHECKING, Annotated, ClassVar, Unpack
+from typing import TYPE_CHECKING, Annotated, ClassVar, Literal, Self, Unpack
 
 import numpy as np
 from numpy.typing import NDArray
@@ -177,7 +177,7 @@ class Bearing(Support):
         assert diagonal is not None
         return np.diag(diagonal)
 
-    @property
-    def estimated(self) -> bool:
-        """Whether its own stiffness or its own seat is an estimate."""
-        return any(each is not None and each.estimated for each in (self.stiffness, self.seat))
+    @override
+    def at_end(self, which: Literal["low", "high"]) -> Self:
+        moved = {key: each.at_end(which) for key in ("stiffness", "seat") if (each := getattr(self, key)) is not None}
+        return type(self).model_construct(set(self.given), **{**self.__dict__, **moved})

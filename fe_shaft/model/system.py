@@ -17,6 +17,7 @@ from fe_shaft.model.assembly import Assembly
 from fe_shaft.model.case import Case
 from fe_shaft.model.changing import changed
 from fe_shaft.model.draft import MOST_FAULTS, MOST_NOUNS, Draft, read_tables
+from fe_shaft.model.estimates import HOUSING, estimates_of
 from fe_shaft.model.groups import GROUPS, PARTS, group_of
 from fe_shaft.model.heading import Heading
 from fe_shaft.model.housing import Housing
@@ -25,20 +26,19 @@ from fe_shaft.model.limit import Limit
 from fe_shaft.model.lookup import Lookup
 from fe_shaft.model.material import Material
 from fe_shaft.model.notes import Note, notes_of
+from fe_shaft.model.part import Heavy
 from fe_shaft.model.refusal import problem
 from fe_shaft.model.shaft import Shaft
 from fe_shaft.model.statics import Statics
 from fe_shaft.model.statics import statics as statics_of
 from fe_shaft.model.summary import summary, summary_html
-from fe_shaft.model.support import Bearing, Support
+from fe_shaft.model.support import Support
 from fe_shaft.model.support_table import SupportTable, tabulate
 from fe_shaft.model.variants import End, at_end, housing_at_end, pin_of, seated
 from fe_shaft.model.words import Fault, Named
 
 if TYPE_CHECKING:
     from fe_shaft.model.keywords import HeadingWords
-
-HOUSING = "housing"  # name of the housing's seat among the estimated things
 
 
 class Model(Lookup):
@@ -69,7 +69,6 @@ class Model(Lookup):
         With every mistake found.
     """
 
-    parts: tuple[Named, ...]
     written_cases: tuple[Case, ...]
     written_limits: tuple[Limit, ...]
     own_materials: tuple[Material, ...]
@@ -150,12 +149,10 @@ class Model(Lookup):
 
     @cached_property
     def estimated(self) -> tuple[str, ...]:
-        """Names of the things whose stiffness is an estimate; ``housing`` is one of them."""
-        written = [part for part in self.parts if isinstance(part, Bearing)]
-        found = [part.name for part in written if part.estimated]
-        seat = None if self.housing is None else self.housing.seat
-        in_housing = any(part.seat is None for part in written)
-        return (*found, HOUSING) if in_housing and seat is not None and seat.estimated else tuple(found)
+        """Names of the things that are estimated: parts, segments with keyways or splines, ``housing``."""
+        found = dict.fromkeys(each.thing for each in estimates_of(self) if each.thing != HOUSING)
+        housing = any(each.thing == HOUSING for each in estimates_of(self))
+        return (*found, *[HOUSING] * housing)
 
     # ---- in numbers
 
@@ -191,26 +188,31 @@ class Model(Lookup):
         housing = self.housing
         if housing is not None and HOUSING in ends:
             housing = housing_at_end(housing, ends[HOUSING])
-        written = {part.name: part for part in self.parts if isinstance(part, Support)}
-        moved = {name: at_end(part, ends.get(name)) for name, part in written.items()}
-        return self._with_supports(moved, housing)
+        return self._with_parts([at_end(part, ends) for part in self.parts], housing)
 
     def pinned(self) -> Self:
         """The model with every bearing a rigid pin that holds the same; seats are dropped."""
-        return self._with_supports({support.name: pin_of(support) for support in self.supports}, None)
+        return self._with_parts([pin_of(part) if isinstance(part, Support) else part for part in self.parts], None)
+
+    def with_hubs(self, hub: str) -> Self:
+        """The model with every hub whose size is known at ``none`` or in ``one piece`` with its shaft."""
+        parts = [
+            part.with_hub(hub) if isinstance(part, Heavy) and part.name in self.hubs else part for part in self.parts
+        ]
+        return self._altered(parts=tuple(parts))
 
     def plain(self) -> Self:
         """The model without its shoulders: every segment carries to its rim from end to end."""
         given = self.heading.given | {"shoulders"}
         return self._altered(heading=Heading.model_construct(given, **{**self.heading.__dict__, "shoulders": "off"}))
 
-    def _with_supports(self, written: Mapping[str, Support], housing: Housing | None) -> Self:
-        """The same model with other supports in the same places."""
+    def _with_parts(self, parts: Sequence[Named], housing: Housing | None) -> Self:
+        """The same model with other parts in the same places."""
         given = self.heading.given if housing is not None else self.heading.given - {HOUSING}
         return self._altered(
             heading=Heading.model_construct(set(given), **{**self.heading.__dict__, "housing": housing}),
-            parts=tuple(written.get(part.name, part) for part in self.parts),
-            supports=tuple(seated(written[support.name], housing) for support in self.supports),
+            parts=tuple(parts),
+            supports=tuple(seated(part, housing) for part in parts if isinstance(part, Support)),
         )
 
     def _altered(self, **attributes: Any) -> Self:

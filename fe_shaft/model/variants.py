@@ -1,11 +1,15 @@
-"""Support to support: every bearing a rigid pin, every estimate at one end of its band."""
+"""Part to part: every bearing a rigid pin, every estimate at one end of its band."""
 
 from __future__ import annotations
 
+from collections.abc import Mapping
 from typing import Literal
 
 from fe_shaft.model.housing import Housing
+from fe_shaft.model.part import Part
+from fe_shaft.model.shaft import Shaft
 from fe_shaft.model.support import Bearing, Pin, Support
+from fe_shaft.model.words import Named
 
 End = Literal["low", "high"]
 _PIN_KEYS = tuple(Pin.model_fields)
@@ -25,12 +29,11 @@ def pin_of(support: Support) -> Pin:
     return Pin.model_construct(support.given & set(_PIN_KEYS), **{key: getattr(support, key) for key in _PIN_KEYS})
 
 
-def at_end(support: Support, which: End | None) -> Support:
-    """A bearing as written, with its own estimates at one end of their bands."""
-    if which is None or not isinstance(support, Bearing):
-        return support
-    moved = {key: each.at_end(which) for key in ("stiffness", "seat") if (each := getattr(support, key)) is not None}
-    return Bearing.model_construct(set(support.given), **{**support.__dict__, **moved})
+def at_end(part: Named, ends: Mapping[str, End]) -> Named:
+    """A part or shaft as written, with its own estimates at ends of their bands, by name or address."""
+    if isinstance(part, Shaft):
+        return part.at_ends(ends)
+    return part.at_end(ends[part.name]) if isinstance(part, Part) and part.name in ends else part
 
 
 def housing_at_end(housing: Housing, which: End) -> Housing:

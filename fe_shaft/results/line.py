@@ -100,7 +100,7 @@ class Line:
 
     def _sides(self, what: str) -> tuple[Array, Array]:
         pieces = self.found.pieces
-        left, right = (getattr(pieces, f"{what}_{side}")[self.own] for side in ("left", "right"))
+        left, right = (getattr(pieces.drawn, f"{what}_{side}")[self.own] for side in ("left", "right"))
         return left, right
 
     def _before(self, what: str) -> Array:

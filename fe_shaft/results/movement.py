@@ -95,15 +95,18 @@ class Movement(Generic[Number]):
 
 @dataclass(frozen=True, repr=False)
 class GearMovement(Movement[Number]):
-    """Of a gear: also against its mate.
+    """Of a gear's rim: also against its mate.
 
     Attributes
     ----------
+    body : (n_cases, 6) or (6,) [m, rad]
+        How far the rim moves against the shaft, by the gear's body; part of `u`.
     point : (3,) [m], from the axis to the pitch point
     towards_mate, along : (3,) unit vectors: to the mate's axis; along the pitch circle, clockwise from left
     sense : (n_cases,) or a number: +1 turns clockwise from left, or not at all; -1 the other way
     """
 
+    body: Array
     point: tuple[float, float, float]
     towards_mate: tuple[float, float, float]
     along: tuple[float, float, float]
@@ -126,7 +129,18 @@ class GearMovement(Movement[Number]):
         """Movement of the pitch point itself, rigid with the axis, (..., 3) [m]."""
         return self.u[..., :3] + np.cross(self.u[..., 3:], np.array(self.point))
 
+    @property
+    def body_movement(self) -> Number:
+        """Radial movement of the rim against the shaft [m]."""
+        return self._give(np.hypot(self.body[..., UY], self.body[..., UZ]))
+
+    @property
+    def body_tilt(self) -> Number:
+        """Tilt of the rim against the shaft [rad]."""
+        return self._give(np.hypot(self.body[..., RY], self.body[..., RZ]))
+
     separation_um, tangential_um = map(in_unit, ("separation", "tangential"))
+    body_movement_um, body_tilt_mrad = map(in_unit, ("body_movement", "body_tilt"))
 
 
 @dataclass(frozen=True, repr=False)

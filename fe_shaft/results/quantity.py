@@ -38,6 +38,8 @@ _ALL = (
     Quantity("twist", "mrad", "angle", "rotation about the axis, clockwise from left", "place"),
     Quantity("separation", "um", "length", "movement away from the mate", "gear"),
     Quantity("tangential", "um", "length", "movement along the pitch circle, with the turning", "gear"),
+    Quantity("body_movement", "um", "length", "radial movement of the rim against the shaft", "gear"),
+    Quantity("body_tilt", "mrad", "angle", "tilt of the rim against the shaft", "gear"),
     Quantity("tilt", "mrad", "angle", "inner ring against outer ring", "support"),
     Quantity("force", "N", "force", "resultant force on the shaft", "support"),
     Quantity("radial_force", "N", "force", "force on the shaft across its axis", "support"),

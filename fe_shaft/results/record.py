@@ -159,6 +159,7 @@ def _verdict(verdict: Verdict) -> dict[str, Any]:
         "counting": verdict.counting,
         "shaft_alone": verdict.shaft_alone,
         "by_shoulders": verdict.by_shoulders,
+        "hubs": None if verdict.hubs is None else {"none": verdict.hubs[0], "one_piece": verdict.hubs[1]},
         "source": verdict.source,
         "band": None
         if band is None

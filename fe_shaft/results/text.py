@@ -106,11 +106,13 @@ def _last(page: Page, k: int) -> list[str]:
     """Notes, balanced torques, estimates, proof, and the line to check by hand."""
     results = page.results
     estimated = [f"{what}: {', '.join(page.names(24)[name] for name in of)}" for what, of in estimates(results.model)]
-    taken = [note for note in results.model.notes if note.key != "estimates"]
+    doubts = [note for note in results.balances if note.key == "shoulders"]
+    taken = [*(note for note in results.model.notes if note.key != "estimates"), *doubts]
+    balanced = [note for note in results.balances if note not in doubts]
     lines: list[str] = []
     if estimated:
         lines += labelled("Estimated", estimated)
-    for label, notes in (("Notes    ", taken), ("Balanced ", list(results.balances))):
+    for label, notes in (("Notes    ", taken), ("Balanced ", balanced)):
         if notes:
             lines += labelled(label, _told(notes))
     lines += labelled("Proof    ", [results.proof.sentence()])

@@ -74,6 +74,7 @@ class Verdict:
     band : over the estimates, None where nothing is estimated
     shaft_alone : the value on rigid pins, None where pins cannot hold the shaft
     by_shoulders : how much of the value is the shoulders' doing, None where no shoulder counts
+    hubs : the value with no hub carrying, and with all hubs in one piece with their shafts; None without hubs
     """
 
     limit: str
@@ -90,6 +91,7 @@ class Verdict:
     band: Band | None = None
     shaft_alone: float | None = None
     by_shoulders: float | None = None
+    hubs: tuple[float, float] | None = None
 
     @property
     def word(self) -> Word:

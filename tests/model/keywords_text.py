@@ -5,11 +5,13 @@ Run ``python -m tests.model.keywords_text`` from the top folder after a key of a
 
 from pathlib import Path
 
+from fe_shaft.model.body import Body
 from fe_shaft.model.clock import ClockAngle, Turning
 from fe_shaft.model.groups import GROUPS
 from fe_shaft.model.heading import Heading
 from fe_shaft.model.helix import HelixKind
 from fe_shaft.model.housing import Estimates, Housing, OutputUnits
+from fe_shaft.model.hub import HubKind
 from fe_shaft.model.kinds import Choice, Count, Factor, Flag, Kind, Name, Reference, Text
 from fe_shaft.model.limit import Bound, Of
 from fe_shaft.model.lists import Listed, Shares
@@ -21,11 +23,12 @@ from fe_shaft.model.quantity import Quantity
 from fe_shaft.model.segment import Segment, ShearKind
 from fe_shaft.model.shaft import Vector
 from fe_shaft.model.stiffness import Matrix, MatrixUnits, Rows, Seat, Stiffness
+from fe_shaft.model.weakening import Keyway, Spline
 from fe_shaft.model.words import Words, holds_list, inner_noun
 
 NOUNS: tuple[type[Words], ...] = (
-    Heading, Segment, *GROUPS.values(), Stiffness, Seat, Matrix, MatrixUnits, Couple, BeltPull, Housing, Estimates,
-    OutputUnits,
+    Heading, Segment, Keyway, Spline, Body, *GROUPS.values(), Stiffness, Seat, Matrix, MatrixUnits, Couple, BeltPull,
+    Housing, Estimates, OutputUnits,
 )  # fmt: skip
 TARGET = Path("fe_shaft/model/keywords.py")
 HEAD = '''"""The words of every noun as types, so that editors complete them and type checkers know them.
@@ -100,6 +103,7 @@ def _of_kind(kind: Kind) -> str:
         (Text, Name, Reference): "str", Count: "int", Factor: "float", Flag: "bool", HelixKind: "str | Helix",
         PositionKind: "Number | Position", (Quantity, ClockAngle, SpreadKind, Bound): "Number",
         Of: "str | Sequence[str]", Rows: "Any", ShearKind: 'Literal["cowper", "none"] | float',
+        HubKind: 'Literal["none", "one piece"] | float',
     }  # fmt: skip
     return next(text for kinds, text in simple.items() if isinstance(kind, kinds))
 

@@ -50,7 +50,9 @@ def test_keys_are_stable(record):
     assert record["format"] == "fe_shaft results"
     assert record["version"] == 1
     assert record["units"] == {"length": "m", "angle": "rad", "force": "N", "moment": "N m", "energy": "J"}
-    keys = "limit word part quantity dimension case value min max use use_per_case counting shaft_alone by_shoulders"
+    keys = (
+        "limit word part quantity dimension case value min max use use_per_case counting shaft_alone by_shoulders hubs"
+    )
     assert list(record["verdicts"][0]) == [*keys.split(), "source", "band"]
 
 

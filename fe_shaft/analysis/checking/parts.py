@@ -69,6 +69,8 @@ def _part(model: Model, part: Part) -> PartCheck:
     place = model.places[part.name]
     phrases = next((say for kind, say in _SAYS.items() if isinstance(part, kind)), _nothing)
     words = [*phrases(part, is_level(model, place.shaft))]
+    if isinstance(part, Heavy) and part.hub is not None:
+        words.append(f"hub {part.hub}" if isinstance(part.hub, str) else f"hub ~{part.hub:g} of one piece")
     if isinstance(part, Heavy) and part.mass is not None:
         words += _mass(model, part)
     return PartCheck(part.name, noun(part), place.x, tuple(words))
@@ -142,6 +144,9 @@ def _gear(gear: Any, level: bool) -> Iterator[str]:
     yield ", ".join(size)
     if gear.form == "bevel":
         yield f"bevel, cone {gear.pitch_cone_angle.text}, apex {gear.apex}"
+    if gear.body is not None:
+        figures = {key: getattr(gear.body, key) for key in ("radial", "tilt")}
+        yield "body " + ", ".join(f"{key} {value or 'rigid'}" for key, value in figures.items())
     yield "no mate" if gear.mate is None else f"mate {side(gear.mate, level=level)}"
     if isinstance(gear.spread, Value):
         yield f"tooth force over {gear.spread.text}"

@@ -5,9 +5,10 @@ from __future__ import annotations
 from collections.abc import Iterator, Sequence
 from typing import TYPE_CHECKING, Any
 
+from fe_shaft.model.estimates import estimates_of
 from fe_shaft.model.notes import Note
-from fe_shaft.model.support import Bearing
 from fe_shaft.model.words import Words
+from fe_shaft.results.words.verdicts import band_words
 from fe_shaft.results.words.wording import listed
 from fe_shaft.units import Value
 
@@ -72,41 +73,14 @@ def _is_written(model: Model, key: str) -> bool:
 
 def estimates_in_words(model: Model) -> tuple[str, ...]:
     """What is estimated, by band: "radial, tilt of lay_left; radial of lay_right: half to twice"."""
-    bands: dict[str, list[str]] = {}
-    for owner, noun in _owners(model):
-        found: dict[str, list[str]] = {}
-        for key, value in _values(noun):
-            if value.estimated:
-                found.setdefault(_band(value), []).append(key)
-        for band, keys in found.items():
-            bands.setdefault(band, []).append(f"{', '.join(keys)} of {owner}")
-    return tuple(f"{'; '.join(things)}: {band}" for band, things in bands.items())
-
-
-def _owners(model: Model) -> Iterator[tuple[str, Words]]:
-    for part in model.parts:
-        if isinstance(part, Bearing):
-            if part.stiffness is not None:
-                yield part.name, part.stiffness
-            if part.seat is not None:
-                yield f"{part.name}'s seat", part.seat
-    if "housing" in model.estimated and model.housing is not None and model.housing.seat is not None:
-        yield "the housing's seat", model.housing.seat
-
-
-def _values(noun: Words) -> Iterator[tuple[str, Value]]:
-    for key in type(noun).model_fields:
-        value = getattr(noun, key)
-        if isinstance(value, Value) and key in noun.given:
-            yield key, value
-
-
-def _band(value: Value) -> str:
-    assert value.low is not None
-    assert value.high is not None
-    if abs(value.low * 2 - value.si) < 1e-9 * value.si and abs(value.high - 2 * value.si) < 1e-9 * value.si:
-        return "half to twice"
-    return f"{value.end('low').text} to {value.end('high').text}"
+    bands: dict[str, dict[str, list[str]]] = {}
+    for each in estimates_of(model):
+        words = band_words(each) if each.usual else f"{each.value}, {band_words(each)}"
+        bands.setdefault(words, {}).setdefault(each.thing, []).append(each.key)
+    return tuple(
+        "; ".join(", ".join(keys) + f" of {thing}" for thing, keys in things.items()) + f": {words}"
+        for words, things in bands.items()
+    )
 
 
 # ---- limits and sources

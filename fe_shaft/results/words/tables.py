@@ -12,11 +12,12 @@ from fe_shaft.model.actions import gravity_in_shaft, shaft_mass
 from fe_shaft.model.case import ONLY_CASE
 from fe_shaft.model.groups import noun
 from fe_shaft.model.support import Bearing
-from fe_shaft.results.movement import SupportMovement
+from fe_shaft.results.movement import GearMovement, SupportMovement
 from fe_shaft.results.of_shoulders import of_shoulders
 from fe_shaft.results.words.layout import Column, fitting, shortened, table
 from fe_shaft.results.words.page import Page
 from fe_shaft.results.words.wording import NOTHING, clock_hours, is_level, number
+from fe_shaft.units import show
 
 Array = NDArray[np.float64]
 
@@ -90,7 +91,19 @@ def movement(page: Page, shaft: str, k: int) -> list[str]:
     if not moving:
         return [f"Nothing moves on {page.names(40)[shaft]}."]
     columns = [replace(column, cells=tuple(column.cells[n] for n in moving)) for column in columns]
-    return _drawn(page, "Movement", shaft, k, [page.on[shaft][n] for n in moving], columns)
+    lines = _drawn(page, "Movement", shaft, k, [page.on[shaft][n] for n in moving], columns)
+    return [*lines, *_bodies(page, shaft, k)]
+
+
+def _bodies(page: Page, shaft: str, k: int) -> list[str]:
+    """What of the movement of gears their bodies make."""
+    gears = [page.results.parts[name] for name in page.on[shaft]]
+    return [
+        f"  of it {page.names(24)[gear.name]}'s body: {show(gear.body_movement[k], page.shown.length)}, "
+        f"{show(gear.body_tilt[k], page.shown.angle)}"
+        for gear in gears
+        if isinstance(gear, GearMovement) and gear.body[k].any()
+    ]
 
 
 def _by_shoulders(page: Page, shaft: str, k: int, cells: Cells) -> list[Column]:

@@ -7,9 +7,10 @@ from typing import TYPE_CHECKING
 
 import numpy as np
 
-from fe_shaft.model.support import Bearing
+from fe_shaft.model.estimates import Estimate, estimates_of
+from fe_shaft.model.hub import NONE, ONE_PIECE
 from fe_shaft.results.extremes import largest_along
-from fe_shaft.results.words.layout import Column, fitting, paragraph, table
+from fe_shaft.results.words.layout import Column, fitting, labelled, paragraph, table
 from fe_shaft.results.words.wording import listed, number, plain
 from fe_shaft.units import Value, show
 
@@ -35,38 +36,29 @@ SAME = 5e-4  # relative: no difference in three digits
 _UNJUDGED = "No limit is written, so nothing is judged."
 
 
-def _estimated(model: Model) -> Iterator[tuple[str, str, Value]]:
-    """Support, key and value of every estimated stiffness, as written."""
-    for part in model.supports:
-        if not isinstance(part, Bearing):
-            continue
-        for where, springs in (("", part.stiffness), ("seat ", part.seat)):
-            for key, value in vars(springs).items() if springs is not None else ():
-                if isinstance(value, Value) and value.estimated:
-                    yield part.name, f"{where}{key}", value
-
-
-def _is_usual(value: Value) -> bool:
-    """Whether a band reaches from half to twice, to rounding."""
-    ends = np.array([value.low or 0.0, value.high or 0.0])
-    return bool(np.allclose(ends, [value.si / 2, value.si * 2], rtol=1e-9, atol=0.0))
-
-
 def usual_bands(model: Model) -> bool:
     """Whether every estimate reaches from half to twice."""
-    return all(_is_usual(value) for _, _, value in _estimated(model))
+    return all(each.usual for each in estimates_of(model))
 
 
 def estimates(model: Model) -> list[tuple[str, list[str]]]:
-    """What is estimated, with its band, and the supports for which it is: ("radial ~93 N/um", ["lay_left"])."""
+    """What is estimated, with its band, and the things for which it is: ("radial ~93 N/um", ["lay_left"])."""
     found: dict[str, list[str]] = {}
-    for name, key, value in _estimated(model):
-        unit = "N m/mrad" if "tilt" in key else "N/um"
-        band = "half to twice"
-        if not _is_usual(value):
-            band = f"{number(value.low or 0.0, unit)} to {show(value.high or 0.0, unit)}"
-        found.setdefault(plain(f"{key} {value} ({band})"), []).append(name)
+    for each in estimates_of(model):
+        found.setdefault(plain(f"{each.key} {each.value} ({band_words(each)})"), []).append(each.thing)
     return list(found.items())
+
+
+def band_words(each: Estimate) -> str:
+    """The band of an estimate: "half to twice", "33 to 38 mm", "none to one piece"."""
+    if each.usual:
+        return "half to twice"
+    if each.key == "hub":
+        return f"{NONE} to {ONE_PIECE}"
+    low, high = each.value.low or 0.0, each.value.high or 0.0
+    if each.unit == "mm":
+        return f"full {show(low, each.unit)}, ignored {show(high, each.unit)}"
+    return f"{number(low, each.unit)} to {show(high, each.unit)}"
 
 
 # ---- the first sentence
@@ -191,7 +183,7 @@ def _with_alone(page: Page, verdicts: Sequence[Verdict], lines: list[str]) -> li
         out.append(line)
         told = list(_parts_of(verdict, page.shown.unit(verdict.quantity)))
         if told:
-            out += paragraph("; ".join([f"counting {verdict.counting}", *told]), "      ", first="    ")
+            out += labelled("  ", [f"counting {verdict.counting}", *told], between="; ")
     return out
 
 
@@ -202,6 +194,9 @@ def _parts_of(verdict: Verdict, unit: str) -> Iterator[str]:
         yield f"shaft alone (rigid pins): {show(alone, unit)}, use {number(verdict.use_of(alone), '')}"
     if shoulders is not None and abs(shoulders) > SAME * abs(verdict.value):
         yield f"shoulders: {number(shoulders, unit, sign=True)} {unit}"
+    if verdict.hubs is not None and abs(verdict.hubs[0] - verdict.hubs[1]) > SAME * abs(verdict.value):
+        none, one_piece = verdict.hubs
+        yield f"hubs {NONE} to {ONE_PIECE}: {number(none, unit)} to {show(one_piece, unit)}"
 
 
 def _mixes(page: Page, verdicts: Sequence[Verdict]) -> list[str]:
