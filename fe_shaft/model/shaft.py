@@ -248,7 +248,9 @@ class Shaft(Named):
     @cached_property
     def ends(self) -> Array:
         """Where segments end, from the left end on: (n_segments + 1,) [m], the first 0."""
-        return running_sums(self.lengths)
+        ends = running_sums(self.lengths)
+        ends.setflags(write=False)
+        return ends
 
     @cached_property
     def segment_index(self) -> dict[str, int]:

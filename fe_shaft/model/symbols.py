@@ -56,8 +56,8 @@ LATER: dict[str, dict[str, str]] = {
         "Leave it out: the bearing is a linear spring here.",
     ),
     "Gear": dict.fromkeys(
-        ("profile_shift", "lead_crowning", "helix_slope", "end_relief", "hub"),
-        "Leave it out: tooth forces act on the reference cylinder, gear bodies are rigid.",
+        ("profile_shift", "lead_crowning", "helix_slope", "end_relief"),
+        "Leave it out: tooth forces act on the reference cylinder.",
     )
     | {
         "centre_distance": "Leave it out: tooth forces act on the reference cylinder.",

@@ -80,12 +80,6 @@ def test_pressure_angle_is_that_of_iso_53_unless_written() -> None:
             '"worm" is not known yet in this version. Only cylindrical and bevel gears are known.',
         ),
         ({"helix": "15 deg"}, "g.helix", '"15 deg": left-hand or right-hand? Write "15 deg left" or "15 deg right".'),
-        (
-            {"hub": "one piece"},
-            "g.hub",
-            "hub is not known yet in this version. "
-            "Leave it out: tooth forces act on the reference cylinder, gear bodies are rigid.",
-        ),
         ({"internal": True}, "g.internal", "internal is not known yet in this version. Only external gears are known."),
         ({"cg_at": "3 mm"}, "g.mass", 'mass is not written, but cg_at is. Write mass = "4.1 kg".'),
         (

@@ -15,7 +15,8 @@ def notes(made: fs.Model) -> dict[str, str]:
 def test_defaults_of_a_plain_model() -> None:
     assert notes(model(gravity="down")) == {
         "housing.seat": "seats rigid: lay_left, lay_right",
-        "hub": "gear bodies rigid, not stiffening the shaft",
+        "wheel.body": "gear bodies rigid: wheel, pinion",
+        "wheel.hub": "hubs do not stiffen the shaft: wheel",
         "mate": "mates stand still",
         "layshaft.shear": "shear: Cowper",
         "shoulders": "shoulders make the shafts softer, by a rule made for this project",
@@ -23,7 +24,7 @@ def test_defaults_of_a_plain_model() -> None:
         "pinion.helix": "spur gears: pinion",
         "efficiency": "efficiency 1",
         "wheel.mass": "no weight is written: wheel, pinion",
-        "estimates": "stiffness is estimated (~): lay_left",
+        "estimates": "estimated or assumed (~): lay_left",
         "pinion.at": "the facewidth of pinion reaches over a shoulder",
     }
 
@@ -133,4 +134,4 @@ def test_unusual_segments_are_counted() -> None:
 
 def test_many_names_are_cut() -> None:
     made = model([bearing(f"b{index}", at="seat") for index in range(6)])
-    assert notes(made)["estimates"] == "stiffness is estimated (~): lay_left, b0, b1, b2 and 3 more"
+    assert notes(made)["estimates"] == "estimated or assumed (~): lay_left, b0, b1, b2 and 3 more"

@@ -49,7 +49,7 @@ def test_all_mistakes_of_a_noun_at_once_also_of_keys_together() -> None:
         "s.bore": "60 mm leaves no wall in a diameter of 50 mm. Make it smaller.",
         "s.fillet": '"-1 mm" is negative. Write 0 or a positive value.',
         "s.beta": "beta is not a key here. Keys: name, length, diameter, bore, end_diameter, end_bore, fillet, "
-        "fillet_left, fillet_right, material, shear.",
+        "fillet_left, fillet_right, material, shear, keyway, spline.",
         "s.lenght": "lenght is not a key here. Nearest: length.",
     }
 
