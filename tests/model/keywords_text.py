@@ -6,6 +6,7 @@ Run ``python -m tests.model.keywords_text`` from the top folder after a key of a
 from pathlib import Path
 
 from fe_shaft.model.clock import ClockAngle, Turning
+from fe_shaft.model.contour import ContourKind
 from fe_shaft.model.groups import GROUPS
 from fe_shaft.model.heading import Heading
 from fe_shaft.model.helix import HelixKind
@@ -100,6 +101,7 @@ def _of_kind(kind: Kind) -> str:
         (Text, Name, Reference): "str", Count: "int", Factor: "float", Flag: "bool", HelixKind: "str | Helix",
         PositionKind: "Number | Position", (Quantity, ClockAngle, SpreadKind, Bound): "Number",
         Of: "str | Sequence[str]", Rows: "Any", ShearKind: 'Literal["cowper", "none"] | float',
+        ContourKind: "Sequence[Sequence[Number | None] | Table]",
     }  # fmt: skip
     return next(text for kinds, text in simple.items() if isinstance(kind, kinds))
 
