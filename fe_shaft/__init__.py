@@ -49,6 +49,7 @@ _HOME = {
     **dict.fromkeys(("solve", "compare"), "fe_shaft.analysis.solve"),
     "check": "fe_shaft.analysis.check",
     **dict.fromkeys(("read", "write"), "fe_shaft.io.model_file"),
+    "read_contour": "fe_shaft.io.contour.reading",
     "export": "fe_shaft.io.export",
     **dict.fromkeys(("view", "picture"), "fe_shaft.views"),
     **dict.fromkeys(("Comparison",), "fe_shaft.results.comparison"),
@@ -72,6 +73,7 @@ if TYPE_CHECKING:
     from fe_shaft.errors import ShaftError as ShaftError
     from fe_shaft.errors import SolutionError as SolutionError
     from fe_shaft.errors import UsageError as UsageError
+    from fe_shaft.io.contour.reading import read_contour as read_contour
     from fe_shaft.io.export import export as export
     from fe_shaft.io.model_file import read as read
     from fe_shaft.io.model_file import write as write

@@ -6,6 +6,7 @@ from collections.abc import Iterator, Mapping
 from typing import Any
 
 from fe_shaft.errors import ModelError, Problem, nearest, quote
+from fe_shaft.io.contour.reading import contour_points
 from fe_shaft.io.model_lines import Origins, Path, SourceLines
 from fe_shaft.io.model_source import Source
 from fe_shaft.io.model_tables import matrix_rows, segments
@@ -14,6 +15,7 @@ from fe_shaft.model.changing import Changing, leaves
 from fe_shaft.model.groups import GROUPS
 from fe_shaft.model.kinds import thing
 from fe_shaft.model.refusal import problem
+from fe_shaft.model.shaft import SHAPES
 from fe_shaft.model.system import Model
 from fe_shaft.model.words import Fault
 
@@ -96,8 +98,8 @@ class Loader:
         """Put the tables that stand beside the model in the place of their names."""
         shafts = self.tables.get("shafts")
         for name, shaft in (shafts if isinstance(shafts, dict) else {}).items():
-            if isinstance(shaft, dict) and "segments_file" in shaft:
-                self._take_segments(source, ("shafts", name), shaft)
+            if isinstance(shaft, dict) and {"segments_file", "contour_file"} & shaft.keys():
+                self._take_shape(source, ("shafts", name), shaft)
         for path, table in list(_matrices(self.tables)):
             if "file" not in table:
                 continue
@@ -107,17 +109,30 @@ class Loader:
             found = self._beside(source, file, (*path, "file")) if "rows" not in table else None
             table.setdefault("rows", matrix_rows(found) if found is not None else None)
 
-    def _take_segments(self, source: Source, path: Path, shaft: dict[str, Any]) -> None:
-        file = shaft.pop("segments_file")
-        if "segments" in shaft:
-            self.faults.append(
-                Fault((*path, "segments_file"), "segments_file stands beside segments. Write one of them.")
-            )
+    def _take_shape(self, source: Source, path: Path, shaft: dict[str, Any]) -> None:
+        """Put the segments or the contour out of a file in the place of its name."""
+        key = "segments_file" if "segments_file" in shaft else "contour_file"
+        file, others = shaft.pop(key), [other for other in SHAPES if other in shaft]
+        words = (
+            {word: shaft.pop(f"contour_{word}", None) for word in ("layer", "unit")} if key == "contour_file" else {}
+        )
+        if others:
+            sentence = f"{key} stands beside {min(others)}. Write one of them."
+            if "contour_file" in others:  # nothing is left to be read
+                self._tell(source, (*path, key), sentence)
+            else:
+                self.faults.append(Fault((*path, key), sentence))
             return
-        found = self._beside(source, file, (*path, "segments_file"))
-        if found is not None:
-            shaft["segments"], lines = segments(found)
-            self.origins.remember_rows((*path, "segments"), found.shown, lines)
+        found = self._beside(source, file, (*path, key))
+        if found is None:
+            return
+        to = key.removesuffix("_file")
+        rows = segments(found) if key == "segments_file" else contour_points(found, **words)
+        shaft[to], lines = rows
+        if lines is None:  # a drawing has none
+            self.origins.where[*path, to] = (found.shown, None)
+        else:
+            self.origins.remember_rows((*path, to), found.shown, lines)
 
     def _include(self, source: Source, names: object) -> None:
         """Take materials and limits out of other files."""

@@ -1,15 +1,17 @@
-"""Tables that stand beside a model file: segments from a spreadsheet, a stiffness matrix."""
+"""Tables that stand beside a model file: segments or a contour from a spreadsheet, a stiffness matrix."""
 
 from __future__ import annotations
 
 import csv
 import re
+from collections.abc import Sequence
 from typing import Any
 
 import numpy as np
 
 from fe_shaft.errors import nearest, quote
 from fe_shaft.io.model_source import Source
+from fe_shaft.model.contour import KINDS
 from fe_shaft.model.segment import Segment
 
 _HEAD = re.compile(r"\s*([a-z_]+)\s*(?:\[\s*(.+?)\s*\]|\s(\S.*?))?\s*")
@@ -22,12 +24,22 @@ def segments(source: Source) -> tuple[list[dict[str, Any]], list[int]]:
     The first line names the columns by the keys of a segment, a unit may follow (``length mm``); where a head has no
     unit, every cell has one. Columns are parted by comma, semicolon or tab.
     """
+    return _table(source, _COLUMNS, "segments")
+
+
+def contour_rows(source: Source) -> tuple[list[dict[str, Any]], list[int]]:
+    """The points of a contour in a CSV file, and the line of each; columns x, diameter, bore, fillet, as above."""
+    return _table(source, list(KINDS), "a contour")
+
+
+def _table(source: Source, columns: Sequence[str], what: str) -> tuple[list[dict[str, Any]], list[int]]:
+    """The rows of a CSV file that are not empty, and the line of each."""
     text = source.text
     first = text.split("\n", 1)[0]
     delimiter = max(";\t,", key=first.count)
     rows = csv.reader(text.splitlines(), delimiter=delimiter)
     try:
-        heads = [_head(source, cell) for cell in next(rows)]
+        heads = [_head(source, cell, columns, what) for cell in next(rows)]
         table, lines = [], []
         for row in rows:
             if any(cell.strip() for cell in row):
@@ -41,14 +53,14 @@ def segments(source: Source) -> tuple[list[dict[str, Any]], list[int]]:
     return table, lines
 
 
-def _head(source: Source, cell: str) -> tuple[str, str]:
+def _head(source: Source, cell: str, columns: Sequence[str], what: str) -> tuple[str, str]:
     match = _HEAD.fullmatch(cell)
-    if match is None or match[1] not in _COLUMNS:
+    if match is None or match[1] not in columns:
         word = match[1] if match else cell.strip()
         raise source.error(
             1,
-            f"{quote(word)} is not a column of segments. "
-            f"{nearest(word, _COLUMNS) or 'Columns: ' + ', '.join(_COLUMNS) + '.'}",
+            f"{quote(word)} is not a column of {what}. "
+            f"{nearest(word, columns) or 'Columns: ' + ', '.join(columns) + '.'}",
         )
     return match[1], match[2] or match[3] or ""
 

@@ -40,8 +40,8 @@ def _is_table(each: object) -> bool:
 def _block(heading: list[str], table: Mapping[str, Any]) -> str:
     lines = [f"[{'.'.join(map(_key, heading))}]"]
     for key, each in table.items():
-        if key == "segments":
-            lines.append("segments = [")
+        if key in ("segments", "contour"):
+            lines.append(f"{key} = [")
             lines += [f"  {value(row)}," for row in each]
             lines.append("]")
         else:

@@ -10,6 +10,7 @@ from fe_shaft.model.groups import GROUPS
 from fe_shaft.model.heading import Heading
 from fe_shaft.model.kinds import thing
 from fe_shaft.model.refusal import problem
+from fe_shaft.model.shaft import SHAPES
 from fe_shaft.model.words import Fault, Words, example_of, inner_noun, tables_of
 
 Path = tuple[str | int, ...]
@@ -21,8 +22,7 @@ DISPLACE: tuple[tuple[frozenset[str], frozenset[str]], ...] = (
     (frozenset({"right_at"}), frozenset({"at", "left_at"})),
     (frozenset({"power"}), frozenset({"torque"})),
     (frozenset({"torque"}), frozenset({"power"})),
-    (frozenset({"segments"}), frozenset({"segments_file"})),
-    (frozenset({"segments_file"}), frozenset({"segments"})),
+    *((frozenset({key}), SHAPES - {key}) for key in SHAPES),
 )
 
 
@@ -110,6 +110,9 @@ class Changing:
         if group == "shafts" and steps[0] not in GROUPS["shafts"].model_fields:
             rows = table[name].get("segments")
             rows = list(rows) if isinstance(rows, Sequence) and not isinstance(rows, str) else []
+            if len(steps) > 1 and "contour" in table[name]:
+                self.faults.append(Fault(where, _of_contour(name)))
+                return None
             if len(steps) > 1 or steps[0] in map(_name_of, rows):
                 table[name]["segments"] = rows
                 return self._set_segment(rows, path, steps, value, where)
@@ -186,6 +189,9 @@ class Changing:
 
     def _remove_segment(self, shaft: str, segment: str, where: Path) -> Path | None:
         table = tables_of(self.tables["shafts"][shaft])
+        if "contour" in table:
+            self.faults.append(Fault(where, _of_contour(shaft)))
+            return None
         rows = list(table.get("segments", ()))
         names = [_name_of(row) for row in rows]
         if segment not in names:
@@ -221,6 +227,10 @@ def _no_segment(shaft: str, name: str, known: list[str]) -> str:
     if name.startswith("segment_") and name[8:].isdigit():
         return f'{shaft}.{name} has no name, so no address. Name it first: name = "..." in that segment.'
     return f"no segment or key of {shaft} is called {quote(name)}. {nearest(name, known)}".rstrip()
+
+
+def _of_contour(shaft: str) -> str:
+    return f"the segments of {shaft} come from its contour and have no names. Change {shaft}.contour as a whole."
 
 
 def _displace(table: dict[str, Any], key: str) -> None:

@@ -5,6 +5,8 @@ from __future__ import annotations
 from collections.abc import Iterator, Mapping
 from typing import TYPE_CHECKING, Any
 
+from fe_shaft.model.plain import as_toml
+
 if TYPE_CHECKING:
     from fe_shaft.model.system import Model
 
@@ -28,6 +30,9 @@ def _flat(table: Mapping[str, Any], path: tuple[str, ...] = ()) -> Iterator[tupl
             continue
         if key == "segments":
             yield from _segments(value, path)
+        elif key == "contour":
+            for number, point in enumerate(value, start=1):
+                yield ".".join((*here[1:], f"point_{number}")), as_toml(point)
         elif isinstance(value, Mapping):
             yield from _flat(value, here)
         else:

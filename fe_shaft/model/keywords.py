@@ -97,12 +97,16 @@ class ShaftWords(TypedDict, total=False):
 
     range_check: Literal["off"]
     source: str
+    contour: Sequence[Sequence[Number | None] | Table]
     material: str
     shear: Literal["cowper", "none"] | float
     left_end: Sequence[Number]
     axis: Literal["+X", "-X", "+Y", "-Y", "+Z", "-Z"]
     twelve: Literal["+X", "-X", "+Y", "-Y", "+Z", "-Z"]
     segments_file: str
+    contour_file: str
+    contour_layer: str
+    contour_unit: Literal["m", "mm", "cm", "um", "nm", "in", "ft", "mil"]
     label: str
 
 

@@ -232,6 +232,8 @@ def _unusual_segments(model: Model, name: str) -> Iterator[Note]:
         kind = kind_of(type(shaft.segments[0]), key)
         assert isinstance(kind, Quantity)
         assert kind.usual is not None
+        if key == "length" and shaft.contour is not None:  # arcs come as cones as short as they need be
+            continue
         odd = np.flatnonzero((numbers < kind.usual[0]) | (numbers > kind.usual[1]))
         if odd.size:
             segment = shaft.segments[odd[0]]

@@ -154,4 +154,4 @@ def _default(noun: type[Words], key: str) -> str:
     if field.is_required():
         return ""
     value = written(field.get_default(call_default_factory=True))
-    return "" if value in (None, "", {}) else as_toml(value)
+    return "" if value in (None, "", {}, []) else as_toml(value)

@@ -8,6 +8,7 @@ from pydantic.json_schema import models_json_schema
 
 from fe_shaft.model.groups import GROUPS
 from fe_shaft.model.heading import Heading
+from fe_shaft.model.shaft import SHAPES
 
 DIALECT = "https://json-schema.org/draft/2020-12/schema"
 
@@ -42,7 +43,7 @@ def _group(noun: str, definitions: dict[str, Any]) -> dict[str, Any]:
     schema["required"] = [key for key in schema.get("required", []) if key != "name"]
     if noun == "Shaft":
         schema["required"] = []
-        schema["anyOf"] = [{"required": ["segments"]}, {"required": ["segments_file"]}]
+        schema["oneOf"] = [{"required": [key]} for key in sorted(SHAPES)]
     return {
         "type": "object",
         "description": schema.get("description", ""),

@@ -11,14 +11,15 @@ from pydantic import Field
 from typing_extensions import override
 
 from fe_shaft.errors import quote
+from fe_shaft.model.contour import ContourKind, Written, segments_of
 from fe_shaft.model.kinds import Choice, Kind, Name, Reference, Text, shown, thing
 from fe_shaft.model.material import Material
 from fe_shaft.model.plain import joined
 from fe_shaft.model.quantity import Coordinate, Quantity
 from fe_shaft.model.refusal import refuse
 from fe_shaft.model.segment import Segment, Shear
-from fe_shaft.model.words import Fault, Named
-from fe_shaft.units import Value
+from fe_shaft.model.words import Fault, Named, example_of
+from fe_shaft.units import FACTORS, Value
 
 if TYPE_CHECKING:
     from fe_shaft.model.keywords import ShaftWords
@@ -26,6 +27,7 @@ if TYPE_CHECKING:
 Array = NDArray[np.float64]
 Ints = NDArray[np.intp]
 MOST_SEGMENTS = 1_000_000
+SHAPES = frozenset(("segments", "segments_file", "contour", "contour_file"))  # one of them says what a shaft is
 AXES = ("+X", "-X", "+Y", "-Y", "+Z", "-Z")
 
 
@@ -140,13 +142,21 @@ class Shaft(Named):
     if TYPE_CHECKING:
 
         def __init__(
-            self, name: str, segments: Sequence[Segment | Mapping[str, Any]], **words: Unpack[ShaftWords]
+            self, name: str, segments: Sequence[Segment | Mapping[str, Any]] = (), **words: Unpack[ShaftWords]
         ) -> None: ...
 
     name: Annotated[str, Name()] = Field(description="Name of the shaft.", examples=["layshaft"])
     segments: tuple[Segment, ...] = Field(
-        description="Its segments from left to right.",
+        default=(),
+        description="Its segments from left to right; a `contour` or a file may stand instead.",
         examples=[[{"name": "wheel_seat", "length": "38 mm", "diameter": "38 mm"}]],
+    )
+    contour: Annotated[tuple[Written, ...], ContourKind()] | None = Field(
+        default=None,
+        description="Its points from left to right, instead of `segments`: x from the left end, outer diameter, bore "
+        "if it is hollow; two points at one x are a step, between points the lines run straight. A point with a fillet "
+        "is a table.",
+        examples=[[["0 mm", "30 mm"], {"x": "19 mm", "diameter": "30 mm", "fillet": "1 mm"}, ["19 mm", "38 mm"]]],
     )
     material: Annotated[str, Reference()] | None = Field(
         default=None, description="Name of a built-in material or one of `materials`.", examples=["42CrMo4"]
@@ -174,14 +184,27 @@ class Shaft(Named):
         description="Model files only: a table (CSV) with the segments, beside the model, instead of `segments`.",
         examples=["layshaft.csv"],
     )
+    contour_file: Annotated[str, Text()] | None = Field(
+        default=None,
+        description="Model files only: a table (CSV) or drawing (DXF) with the contour, beside the model, instead of "
+        "`contour`.",
+        examples=["layshaft.dxf"],
+    )
+    contour_layer: Annotated[str, Text()] | None = Field(
+        default=None,
+        description="Layer of the drawing with the contour; may be left out if one layer alone has lines.",
+        examples=["contour"],
+    )
+    contour_unit: Annotated[str, Choice(*FACTORS["length"])] | None = Field(
+        default=None, description="Unit of a drawing that states none.", examples=["mm"]
+    )
     label: Annotated[str, Text()] | None = Field(
         default=None, description="What pictures call it, in any alphabet.", examples=["intermediate shaft"]
     )
 
     @override
     def faults_together(self) -> Iterator[Fault]:
-        if "segments_file" in self.given:
-            yield Fault(("segments_file",), "only a model file reads files. In a script write segments = [...].")
+        yield from self._source_faults()
         yield from self._list_faults()
         yield from self._name_faults()
         if not self.axis:
@@ -194,10 +217,31 @@ class Shaft(Named):
                 ("twelve",), f'12 o\'clock cannot point along the axis ({self.axis}). Write twelve = "{other}".'
             )
 
+    def model_post_init(self, context: Any) -> None:
+        """Put the segments of a contour in their place; what was written stays the contour."""
+        if self.contour and "segments" not in self.given:
+            self.__dict__["segments"] = segments_of(self.contour)
+
+    def _source_faults(self) -> Iterator[Fault]:
+        """Where the segments come from: exactly one place."""
+        if "segments_file" in self.given:
+            yield Fault(("segments_file",), "only a model file reads files. In a script write segments = [...].")
+        if "contour_file" in self.given:
+            remedy = 'In a script write contour = fs.read_contour("shaft.dxf").'
+            yield Fault(("contour_file",), f"only a model file reads files. {remedy}")
+        for key in ("contour_layer", "contour_unit"):
+            if key in self.given and "contour_file" not in self.given:
+                yield Fault((key,), f"{key} belongs to a contour_file, and none is read here. Write both, or neither.")
+        if "contour" in self.given and "segments" in self.given:
+            yield Fault(("contour",), "contour stands beside segments. Write one of them.")
+        if not self.given & SHAPES:
+            remedy = f"Write {example_of(type(self), 'segments')}, or contour = [...]."
+            yield Fault(("segments",), f"segments is not written. {remedy}")
+
     def _list_faults(self) -> Iterator[Fault]:
         if self.segments is None:
             return
-        if not self.segments:
+        if not self.segments and "segments" in self.given:
             yield Fault(
                 ("segments",), 'the shaft has no segment. Write segments = [{ length = "38 mm", diameter = "38 mm" }].'
             )
@@ -329,7 +373,9 @@ def _density(material: Material) -> float:
 
 
 def inside_shaft(segments: Any, path: tuple[str | int, ...]) -> list[str]:
-    """The steps of an address inside a shaft: segments by name, or by their number from 1."""
+    """The steps of an address inside a shaft: segments by name, or by their number from 1, as points of a contour."""
+    if len(path) > 1 and path[0] == "contour" and isinstance(path[1], int):
+        return ["contour", f"point_{path[1] + 1}", *(str(step) for step in path[2:])]
     if len(path) < 2 or path[0] != "segments" or not isinstance(path[1], int):
         return [str(step) for step in path]
     rows = segments if isinstance(segments, list | tuple) else ()

@@ -238,7 +238,15 @@ def test_places_masses_and_sizes():
 
 def test_defaults_are_told_with_their_keys_and_only_if_taken():
     taken = {note.key for note in fs.check(layshaft()).taken}
-    assert taken >= {"housing.seat", "layshaft.shear", "wheel.pressure_angle", "wheel.hub", "wheel.body", "mate", "wheel.mass"}
+    assert taken >= {
+        "housing.seat",
+        "layshaft.shear",
+        "wheel.pressure_angle",
+        "wheel.hub",
+        "wheel.body",
+        "mate",
+        "wheel.mass",
+    }
     other = fs.check(layshaft(shaft={"shear": "none"}, housing={"seat": {"radial": "400 N/um"}}))
     assert not {"housing.seat", "layshaft.shear"} & {note.key for note in other.taken}
 

@@ -7,6 +7,7 @@ from pathlib import Path
 
 from fe_shaft.model.body import Body
 from fe_shaft.model.clock import ClockAngle, Turning
+from fe_shaft.model.contour import ContourKind
 from fe_shaft.model.groups import GROUPS
 from fe_shaft.model.heading import Heading
 from fe_shaft.model.helix import HelixKind
@@ -104,6 +105,7 @@ def _of_kind(kind: Kind) -> str:
         PositionKind: "Number | Position", (Quantity, ClockAngle, SpreadKind, Bound): "Number",
         Of: "str | Sequence[str]", Rows: "Any", ShearKind: 'Literal["cowper", "none"] | float',
         HubKind: 'Literal["none", "one piece"] | float',
+        ContourKind: "Sequence[Sequence[Number | None] | Table]",
     }  # fmt: skip
     return next(text for kinds, text in simple.items() if isinstance(kind, kinds))
 

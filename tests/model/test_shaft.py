@@ -134,7 +134,8 @@ def test_tolerance_classes_keep_the_nominal_value_and_the_text() -> None:
             {"shoulders": "off"},
             "s.shoulders",
             "shoulders is not a key here. "
-            "Keys: segments, material, shear, left_end, axis, twelve, segments_file, label.",
+            "Keys: segments, contour, material, shear, left_end, axis, twelve, segments_file, contour_file, "
+            "contour_layer, contour_unit, label.",
         ),
         (
             {"beside": "layshaft"},
