@@ -84,8 +84,9 @@ def _stretch(model: Model, name: str) -> tuple[float, float]:
 
 
 def _beside(arrays: SegmentArrays, left: float, right: float) -> bool:
-    """Whether a load between two places comes near a shoulder of a hollow stretch."""
+    """Whether half of a load between two places lies near a shoulder of a hollow stretch."""
     if "hollow" not in arrays.memo:
         arrays.memo["hollow"] = hollow_shoulders(contour_of(arrays))
     place, diameter = arrays.memo["hollow"]
-    return bool((np.maximum(np.maximum(left - place, place - right), 0) < NEAR * diameter).any())
+    inside = np.minimum(right, place + NEAR * diameter) - np.maximum(left, place - NEAR * diameter)
+    return bool((inside >= (right - left) / 2).any())

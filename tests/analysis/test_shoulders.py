@@ -144,7 +144,8 @@ def test_a_load_beside_a_shoulder_of_a_hollow_shaft_is_told():
     assert told(bored, 51.1)
     assert not told(bored, 69.2)
     assert not told(bored, 50.8)
-    assert told(bored, 75, "13 mm")
+    assert told(bored, 68, "13 mm")  # half of it
+    assert not told(bored, 70, "13 mm")
     assert not told(STEPPED, 68)
     found = fs.check(cantilever(bored, [fs.Force("push", at="65 mm", up="1 kN")]))
     assert any("push" in note.sentence for note in found.notes)

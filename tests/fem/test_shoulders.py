@@ -6,6 +6,8 @@ import timeit
 import numpy as np
 import pytest
 
+import fe_shaft as fs
+from fe_shaft.analysis.recovery import solve_once
 from fe_shaft.fem.shoulders.contour import Contour
 from fe_shaft.fem.shoulders.field import Fields, pairs
 from fe_shaft.fem.shoulders.lumps import shoulder_lumps
@@ -297,9 +299,18 @@ def test_range():
 TEN = ([18, 30, 12, 40, 8, 55, 25, 20, 35, 16], [25, 30, 38, 45, 60, 50, 42, 40, 35, 28])
 
 
-def test_ten_segments_with_fillets_cost_under_2_ms():
+def test_ten_segments_with_fillets_cost_little():
+    """Asked are 2 ms where a plain solve of the same shaft takes 0.4 ms; 2.2 times the solve were measured."""
     contour = Contour.of(*TEN, 0, 1, 1)
-    assert min(timeit.repeat(lambda: shoulder_lumps(contour), number=10, repeat=8, timer=time.process_time)) / 10 < 2e-3
+    rows = zip(*TEN, strict=True)
+    shaft = fs.Shaft("s", [fs.Segment(length=f"{x} mm", diameter=f"{d} mm") for x, d in rows], material="C45")
+    held = [fs.Pin("a", at="0 mm", holds=["radial", "axial"]), fs.Pin("b", at="200 mm", holds=["radial"])]
+    model = fs.Model("ten", [shaft, *held, fs.Force("f", at="100 mm", up="1 kN")], shoulders="off")
+    rule, solve = (
+        min(timeit.repeat(run, number=10, repeat=12, timer=time.process_time))
+        for run in (lambda: shoulder_lumps(contour), lambda: solve_once(model))
+    )
+    assert rule < 5 * solve
 
 
 def test_many_variants_in_one_pass():
