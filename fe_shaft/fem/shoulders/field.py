@@ -153,26 +153,63 @@ def pairs(fields: Fields) -> Pairs:
 
 
 def _screened(fields: Fields) -> tuple[Ints, Ints, Ints]:
-    """Rows, receivers and sources worth a look, in single precision."""
-    single = np.float32
-    left, right = fields.left.astype(single), fields.right.astype(single)
-    s = np.maximum(left[:, :, None] - right[:, None], left[:, None] - right[:, :, None])
+    """Rows, receivers and sources worth a look: none farther apart than the source reaches over the lowest level."""
+    row, source, receiver = _in_reach(fields)
+    at, to = row * fields.size + source, row * fields.size + receiver
+    rightwards = source < receiver
+
+    def acting(to_left: Array, to_right: Array) -> Array:
+        if to_right is to_left:
+            return to_left.take(at)
+        return np.where(rightwards, to_right.take(at), to_left.take(at))
+
+    s = np.where(rightwards, fields.left.take(to) - fields.right.take(at), fields.left.take(at) - fields.right.take(to))
     np.maximum(s, 0, out=s)
-    np.power(s, fields.p.astype(single)[:, None, None], out=s)
-    s *= np.minimum(fields.near_left, fields.near_right).astype(single)[:, None]
+    np.power(s, fields.p.take(row), out=s)
+    s *= acting(fields.near_left, fields.near_right)
     if fields.hollow:
-        hollow = np.maximum(fields.hollow_left, fields.hollow_right).astype(single)
-        s *= np.exp(-hollow[:, None] * fields.bore.astype(single)[:, :, None])
-    s += single(1)
-    level = np.minimum(fields.strong_left, fields.strong_right) * (1 - SCREEN)
-    s *= level.astype(single)[:, :, None]
-    there = s < np.maximum(fields.strong_left, fields.strong_right).astype(single)[:, None]
-    there &= (fields.right > fields.left)[:, :, None]
-    index = np.arange(fields.size)
-    there[:, index, index] = False
-    rest, source = np.divmod(np.flatnonzero(there), fields.size)
-    row, receiver = np.divmod(rest, fields.size)
-    return row, receiver, source
+        s *= np.exp(-acting(fields.hollow_left, fields.hollow_right) * fields.bore.take(to))
+    s += 1
+    s *= np.minimum(fields.strong_left.take(to), fields.strong_right.take(to))
+    there = s * (1 - SCREEN) < acting(fields.strong_left, fields.strong_right)
+    there &= fields.right.take(to) > fields.left.take(to)
+    to, source = to[there], source[there]
+    order = np.argsort(to, kind="stable")
+    row, receiver = np.divmod(to[order], fields.size)
+    return row, receiver, source[order]
+
+
+def _in_reach(fields: Fields) -> tuple[Ints, Ints, Ints]:
+    """Rows, sources and receivers such that the source may exceed the lowest level of its row that far away.
+
+    Pieces of a row lie from left to right, so that those in reach are neighbours of each other.
+    """
+    strong = np.maximum(fields.strong_left, fields.strong_right)
+    levels = np.minimum(fields.strong_left, fields.strong_right)
+    lowest = np.where(levels > 0, levels, np.inf).min(axis=1, keepdims=True)
+    near = np.minimum(fields.near_left, fields.near_right)
+    if fields.hollow:
+        hollow = np.maximum(fields.hollow_left, fields.hollow_right)
+        near = near * np.exp(-hollow * fields.bore.max(axis=1, keepdims=True))
+    above = np.maximum(strong / (lowest * (1 - SCREEN)) - 1, 0)
+    reach = (above / near) ** (1 / fields.p[:, None])
+    far = 2 * float(fields.right.max(initial=0.0))  # rows one after the other on one line
+    start = far * np.arange(fields.rows)[:, None]
+    pad = SCREEN * reach
+    first = (start + fields.right).ravel().searchsorted((start + np.maximum(fields.left - reach - pad, 0)).ravel())
+    last = (
+        (start + fields.left)
+        .ravel()
+        .searchsorted((start + np.minimum(fields.right + reach + pad, far / 2)).ravel(), side="right")
+    )
+    own = np.arange(fields.rows * fields.size)
+    number = np.where((above > 0).ravel(), np.maximum(last - first, 0), 0)
+    source = own.repeat(number)
+    receiver = np.arange(len(source)) - (np.cumsum(number) - number - first).repeat(number)
+    apart = receiver != source
+    source, receiver = source[apart], receiver[apart]
+    row, source = np.divmod(source, fields.size)
+    return row, source, receiver - row * fields.size
 
 
 def _pairs(fields: Fields, row: Ints, receiver: Ints, source: Ints, crowd: Ints, lonely: Ints) -> Pairs:

@@ -18,7 +18,6 @@ from fe_shaft.fem.shoulders.field import Fields, Pairs, pairs
 from fe_shaft.fem.shoulders.maxima import Intervals, gauss, integral, maxima
 from fe_shaft.fem.shoulders.pieces import (
     MIDDLE,
-    SLICES,
     EndPieces,
     Neighbours,
     Pieces,
@@ -29,13 +28,14 @@ from fe_shaft.fem.shoulders.pieces import (
     neighbours,
     pieces,
     ratio,
+    slices_of,
 )
 from fe_shaft.fem.shoulders.rule import OFFSET, SECTION_FACTORS, A, M, flexibility
 
 Values = TypeVar("Values", Array, Bools)
 
-#: Pairs of segments and slices worked on at once: enough to fill the arrays, few enough to stay in the cache.
-AT_ONCE = 30_000
+#: Segments and slices worked on at once: enough to fill the arrays, few enough to stay in the cache.
+AT_ONCE = 6_000
 
 
 class ShoulderLumps(NamedTuple):
@@ -81,8 +81,9 @@ def shoulder_lumps(contour: Contour) -> ShoulderLumps:
     """
     whole = contour.flat
     v, n = whole.shape
-    size = n + SLICES * int(whole.tapered.sum())
-    step = max(1, AT_ONCE // max(1, size * size))
+    cones = whole.tapered
+    size = n + slices_of(cones) * int(cones.sum())
+    step = max(1, AT_ONCE // size)
     parts = [_lumps(whole.rows(first, first + step)) for first in range(0, max(v, 1), step)]
     inwards = np.concatenate([part[0] for part in parts])
     amounts = np.concatenate([part[1] for part in parts], axis=1)

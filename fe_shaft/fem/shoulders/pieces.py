@@ -21,8 +21,8 @@ from fe_shaft.fem.shoulders.rule import (
     per_mode,
 )
 
-#: Slices of a cone.
-SLICES = 16
+#: Slices of a cone, and of all cones of a shaft together: of very many, each is but a chord of a curve.
+SLICES, ALL_SLICES = 16, 96
 #: The part of a segment between what its two ends need.
 MIDDLE = 3
 
@@ -171,13 +171,19 @@ def cuts(acts: Bools, tapered: Bools) -> Cuts:
     segment, slot = kept.nonzero()
     if not tapered.any():
         return Cuts(segment, slot, np.zeros(len(segment)), np.ones(len(segment)))
-    number = np.where(tapered[segment] & (slot == MIDDLE), SLICES + 2, 1)
+    slices = slices_of(tapered)
+    number = np.where(tapered[segment] & (slot == MIDDLE), slices + 2, 1)
     part = np.arange(len(segment)).repeat(number)
     step = np.arange(len(part)) - (np.cumsum(number) - number).repeat(number)
     sliced = (number > 1)[part]
-    first = np.where(sliced, np.clip((step - 1) / SLICES, 0, 1), 0.0)
-    last = np.where(sliced, np.clip(step / SLICES, 0, 1), 1.0)
+    first = np.where(sliced, np.clip((step - 1) / slices, 0, 1), 0.0)
+    last = np.where(sliced, np.clip(step / slices, 0, 1), 1.0)
     return Cuts(segment[part], slot[part], first, last)
+
+
+def slices_of(tapered: Bools) -> int:
+    """Slices of each cone. They hang on the number of cones only, so that nothing jumps where a size changes."""
+    return int(min(SLICES, max(1, ALL_SLICES // max(1, int(tapered.sum())))))
 
 
 @dataclass(frozen=True)
