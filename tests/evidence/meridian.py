@@ -101,6 +101,7 @@ class Bar:
     segments: tuple[Segment, ...]
     fillets: tuple[float, ...]
     fineness: Fineness = Fineness()
+    knots: tuple[float, ...] = ()  # further planes that no element shall reach over
 
     @cached_property
     def planes(self) -> Array:
@@ -127,7 +128,7 @@ class Bar:
     def grid(self) -> MeshQuad1:
         """Lines through all planes and radii, close together at the inner corners of sharp steps and along fillets."""
         fine = self.fineness
-        knots_z, knots_r = list(self.planes), [x / 2 for s in self.segments for x in (s.diameter, s.bore)]
+        knots_z, knots_r = [*self.planes, *self.knots], [x / 2 for s in self.segments for x in (s.diameter, s.bore)]
         corners_z, corners_r = dict.fromkeys(self.planes[1:-1], fine.corner), {}
         for _, left, right in self.steps:
             if left.diameter != right.diameter:
