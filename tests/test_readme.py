@@ -3,6 +3,7 @@
 import re
 from pathlib import Path
 
+from tests import readme_shoulders
 from tests.readme_reference import README, reference, split
 
 ROOT = README.parent
@@ -32,6 +33,10 @@ def test_the_script_runs_and_is_ten_lines(capsys):
 def test_the_reference_is_the_models_own():
     _, inside, _ = split(TEXT)
     assert inside == reference(), "run: python -m tests.readme_reference"
+
+
+def test_the_shoulders_of_its_shaft_are_what_is_computed():
+    assert readme_shoulders.split(TEXT)[1] == readme_shoulders.table()
 
 
 def test_every_file_that_the_readme_names_is_there():
