@@ -52,7 +52,7 @@ def results_record(results: Results) -> dict[str, Any]:
         "shafts": {name: _shaft(results, name) for name in results.lines},
         "loads": [_load(action) for action in results.actions],
         "verdicts": [_verdict(verdict) for verdict in results.verdicts],
-        "doubts": list(too_far(results, "mrad", "um", {name: name for name in results.lines})),
+        "doubts": _doubts(results),
         "notes": [{"key": note.key, "sentence": note.sentence} for note in results.notes],
         "proof": _proof(results),
     }
@@ -96,6 +96,11 @@ def _head(kind: str) -> dict[str, Any]:
         "program": f"fe_shaft {PROGRAM}",
         "units": dict(_UNITS),
     }
+
+
+def _doubts(results: Results) -> list[str]:
+    far = too_far(results, "mrad", "um", {name: name for name in results.lines})
+    return [*far, *(f"shoulders: {note.sentence}" for note in results.beyond_range)]
 
 
 def _model(results: Results) -> dict[str, Any]:

@@ -82,6 +82,11 @@ class Results:
         """What was not written and so taken, doubts, and torques that were balanced."""
         return (*self.model.notes, *self.balances)
 
+    @property
+    def beyond_range(self) -> tuple[Note, ...]:
+        """Where the shoulders leave what their rule was made for."""
+        return tuple(note for note in self.balances if note.key == "shoulders")
+
     def __getitem__(self, name: str) -> Any:
         if name in self.parts:
             return self.parts[name]

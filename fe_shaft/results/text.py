@@ -106,9 +106,8 @@ def _last(page: Page, k: int) -> list[str]:
     """Notes, balanced torques, estimates, proof, and the line to check by hand."""
     results = page.results
     estimated = [f"{what}: {', '.join(page.names(24)[name] for name in of)}" for what, of in estimates(results.model)]
-    doubts = [note for note in results.balances if note.key == "shoulders"]
-    taken = [*(note for note in results.model.notes if note.key != "estimates"), *doubts]
-    balanced = [note for note in results.balances if note not in doubts]
+    taken = [note for note in results.model.notes if note.key != "estimates"]
+    balanced = [note for note in results.balances if note not in results.beyond_range]
     lines: list[str] = []
     if estimated:
         lines += labelled("Estimated", estimated)

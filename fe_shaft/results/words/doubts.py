@@ -6,6 +6,7 @@ from collections.abc import Iterator, Mapping
 from typing import TYPE_CHECKING
 
 from fe_shaft.results.words.layout import labelled
+from fe_shaft.results.words.wording import plain
 from fe_shaft.units import show
 
 if TYPE_CHECKING:
@@ -14,14 +15,18 @@ if TYPE_CHECKING:
 
 LARGE_SLOPE = 0.1  # rad: sine and angle differ by 0.2 %, cosine and 1 by 0.5 %
 LARGE_DEFLECTION = 0.1  # of the shaft's length
+MOST_DOUBTS = 4  # said in print; files hold all
 
 
 def doubts(page: Page) -> list[str]:
-    """Shafts that move too far, in any case, for small movements to be assumed; nothing for all others."""
+    """Shafts that move too far, in any case, for small movements to be assumed, and shoulders beyond their rule."""
     names = page.names(40)
     shown = {shaft: names[shaft] for shaft in page.results.lines}
     found = list(too_far(page.results, page.shown.angle, page.shown.length, shown))
-    return labelled("Doubt    ", found) if found else []
+    found += [f"shoulders: {plain(note.sentence)}" for note in page.results.beyond_range]
+    if len(found) > MOST_DOUBTS:
+        found[MOST_DOUBTS - 1 :] = [f"and {len(found) - MOST_DOUBTS + 1} more like this"]
+    return labelled("Doubt    ", found, between="; ") if found else []
 
 
 def too_far(results: Results, angle: str, length: str, names: Mapping[str, str]) -> Iterator[str]:
