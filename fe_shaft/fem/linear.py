@@ -70,7 +70,7 @@ class Solution(NamedTuple):
         return np.asarray(np.log10(np.maximum(missed / np.finfo(float).eps, 1.0)))
 
 
-def solve(network: Network, load: Array, span_load: Array | None = None) -> Solution:
+def solve(network: Network, load: Array, span_load: Array | None = None, spring_load: Array | None = None) -> Solution:
     """Solve for all load cases at once.
 
     Parameters
@@ -79,6 +79,8 @@ def solve(network: Network, load: Array, span_load: Array | None = None) -> Solu
         Wrenches on the nodes, the spans' end loads included.
     span_load : (n_spans, 6, n_cases), optional
         Deformations of the spans under their own distributed loads.
+    spring_load : (n_springs, 6, n_cases), optional
+        Forces of the springs beyond their stiffness times their deformation.
 
     Raises
     ------
@@ -90,6 +92,8 @@ def solve(network: Network, load: Array, span_load: Array | None = None) -> Solu
     f = load.reshape(n * NDOF, n_cases)
     gap = law.gap(span_load, n_cases)
     start = law.starting_forces(red.offset, gap, n_cases)
+    if spring_load is not None:
+        start[law.n_span_rows :] += spring_load.reshape(-1, n_cases)
     resistance = _resistance(network)
     reached = _settle(law, red, start, f, resistance[0], float(network.spans.length.max()))
     u, s = red.expand(reached.q), reached.s
