@@ -27,6 +27,8 @@ _HOME = {
             "Coupling",
             "Force",
             "Gear",
+            "Geometry",
+            "Groove",
             "Helix",
             "Housing",
             "Keyway",

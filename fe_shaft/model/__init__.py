@@ -7,6 +7,7 @@ from fe_shaft.model.gear import Gear
 from fe_shaft.model.heading import Heading
 from fe_shaft.model.helix import Helix
 from fe_shaft.model.housing import Estimates, Housing, OutputUnits
+from fe_shaft.model.inside import Geometry, Groove
 from fe_shaft.model.limit import Limit
 from fe_shaft.model.loads import BeltPull, Couple, Coupling, Force, Mass, Pulley, Sprocket
 from fe_shaft.model.material import Material
@@ -20,7 +21,7 @@ from fe_shaft.model.system import Model
 from fe_shaft.model.weakening import Keyway, Spline
 
 __all__ = [
-    "Bearing", "BeltPull", "Body", "Case", "Couple", "Coupling", "Estimates", "Force", "Frame", "Gear", "Heading",
+    "Bearing", "BeltPull", "Body", "Case", "Couple", "Coupling", "Estimates", "Force", "Frame", "Gear", "Geometry", "Groove", "Heading",
     "Helix", "Housing", "Keyway", "Limit", "Mass", "Material", "Matrix", "MatrixUnits", "Model", "Note", "OutputUnits",
     "Pin", "Place", "Position", "Pulley", "Seat", "Segment", "SegmentArrays", "Shaft", "Spline", "Sprocket",
     "Stiffness", "Support",

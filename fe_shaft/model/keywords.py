@@ -92,6 +92,28 @@ class BodyWords(TypedDict, total=False):
     tilt: Number
 
 
+class GeometryWords(TypedDict, total=False):
+    """Words of `Geometry`."""
+
+    range_check: Literal["off"]
+    source: str
+    elements: Required[int]
+    element_diameter: Required[Number]
+    pitch_diameter: Required[Number]
+    groove: Any
+    roller_length: Number
+    profile: Literal["logarithmic", "cylindrical"]
+
+
+class GrooveWords(TypedDict, total=False):
+    """Words of `Groove`."""
+
+    range_check: Literal["off"]
+    source: str
+    inner: float
+    outer: float
+
+
 class ShaftWords(TypedDict, total=False):
     """Words of `Shaft`."""
 
@@ -148,6 +170,17 @@ class BearingWords(TypedDict, total=False):
     width: Number
     stiffness: Any
     matrix: Any
+    kind: Literal[
+        "deep groove ball bearing",
+        "four-point-contact ball bearing",
+        "self-aligning ball bearing",
+        "cylindrical roller bearing",
+        "needle roller bearing",
+        "spherical roller bearing",
+    ]
+    geometry: Any
+    contact_angle: Number
+    radial_clearance: Number
     seat: Any
 
 

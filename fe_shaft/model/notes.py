@@ -134,11 +134,17 @@ def _supports(model: Model) -> Iterator[Note]:
             yield Note(
                 f"{part.name}.offset", f"offset {part.offset.text} = coaxiality zone of {zone} diameter: {part.name}"
             )
+    computed = [part.name for part in model.supports if isinstance(part, Bearing) and part.computed]
+    loose = [name for name in computed if model[name].radial_clearance is None]
+    if loose:
+        yield Note(f"{loose[0]}.radial_clearance", f"radial clearance 0: {_names(loose)}")
     if model.estimated:
         yield Note("estimates", f"estimated or assumed (~): {_names(list(model.estimated))}")
 
 
 def _unused(part: Bearing) -> Iterator[Note]:
+    if part.computed:
+        return
     words = ("axial", "up", "front", "spin", "tilt_up", "tilt_front")
     if part.stiffness is not None:
         values = part.stiffness.values

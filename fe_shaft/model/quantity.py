@@ -118,6 +118,8 @@ Radius = Annotated[Value, Quantity("length", ("0.1 mm", "20 m"), sign="not negat
 Shift = Annotated[Value, Quantity("length", ("0.001 mm", "20 m"), sign="any")]
 Offset = Annotated[Value, Quantity("length", ("0.1 um", "1 mm"), sign="not negative", unit="um")]
 BoreTilt = Annotated[Value, Quantity("angle", ("0.001 mrad", "20 mrad"), sign="not negative", unit="mrad")]
+Clearance = Annotated[Value, Quantity("length", ("0.1 um", "1 mm"), sign="any", unit="um")]
+ContactAngle = Annotated[Value, Quantity("angle", ("1 deg", "85 deg"))]
 Coordinate = Quantity("length", ("0.01 mm", "100 m"), sign="any")
 Module = Annotated[Value, Quantity("length", ("0.1 mm", "60 mm"))]
 RadialStiffness = Annotated[Value, Quantity("stiffness", ("0.5 N/um", "20000 N/um"))]

@@ -10,10 +10,11 @@ from pydantic import Field
 from typing_extensions import override
 
 from fe_shaft.model.clock import Direction
+from fe_shaft.model.inside import KINDS, BearingKind, Geometry, Kind
 from fe_shaft.model.kinds import Choice
 from fe_shaft.model.lists import Listed
 from fe_shaft.model.part import Part
-from fe_shaft.model.quantity import BoreTilt, Offset, Shift, Width
+from fe_shaft.model.quantity import BoreTilt, Clearance, ContactAngle, Offset, Shift, Width
 from fe_shaft.model.stiffness import Matrix, Seat, Stiffness
 from fe_shaft.model.words import Fault
 
@@ -22,7 +23,10 @@ if TYPE_CHECKING:
 
 HOLDS = ("radial", "axial", "stops_left", "stops_right", "tilt", "spin")
 AXIAL = frozenset(("axial", "stops_left", "stops_right"))
-OTHER_WAYS = frozenset(("catalogue", "geometry", "table"))  # of a later version, refused already
+OTHER_WAYS = frozenset(("catalogue", "table"))  # of a later version, refused already
+COMPUTED_ONLY = ("kind", "contact_angle", "radial_clearance")
+#: Directions of a computed bearing before its own stiffness is known: ux uy uz rx ry rz [N/m, N m/rad].
+UNKNOWN = (1e8, 1e8, 1e8, 0.0, 1e4, 1e4)
 Holds = Annotated[tuple[str, ...], Listed(Choice(*HOLDS), '["radial"]', least=1)]
 
 
@@ -107,6 +111,26 @@ class Bearing(Support):
         description="The whole stiffness as a 6 x 6 matrix, instead of `stiffness`.",
         examples=[{"file": "bearing.mtx"}],
     )
+    kind: Kind | None = Field(
+        default=None,
+        description="Kind of a bearing whose stiffness is computed.",
+        examples=["deep groove ball bearing"],
+    )
+    geometry: Geometry | None = Field(
+        default=None,
+        description="What is inside a bearing whose stiffness is computed, instead of `stiffness`.",
+        examples=[{"elements": 8, "element_diameter": "12.3 mm", "pitch_diameter": "51 mm"}],
+    )
+    contact_angle: ContactAngle | None = Field(
+        default=None,
+        description="Nominal contact angle, from the radial plane, of kinds that have one.",
+        examples=["12 deg"],
+    )
+    radial_clearance: Clearance | None = Field(
+        default=None,
+        description="Radial internal clearance of a computed bearing as mounted and warm; negative: rings press.",
+        examples=["8 um"],
+    )
     seat: Seat | None = Field(
         default=None,
         description="How the housing gives way at this bearing, if not as `housing.seat`; directions not written are "
@@ -117,17 +141,54 @@ class Bearing(Support):
     @override
     def faults_together(self) -> Iterator[Fault]:
         yield from super().faults_together()
-        ways = self.given & {"stiffness", "matrix"}
+        ways = self.given & {"stiffness", "matrix", "geometry"}
+        for key in COMPUTED_ONLY:
+            if key in self.given and "geometry" not in ways:
+                yield Fault((key,), f"{key} belongs to a bearing that is computed. Write geometry = {{ ... }} as well.")
         if not ways and not self.given & OTHER_WAYS:
             yield Fault(
                 ("stiffness",),
                 'stiffness is not written. Write stiffness = { radial = "93 N/um" }, or [pins.X] if it gives nothing '
                 "way.",
             )
-        elif len(ways) == 2:
-            yield Fault(("matrix",), "matrix stands beside stiffness. Write one of them.")
+        elif len(ways) > 1:
+            key = "matrix" if "matrix" in ways else "geometry"
+            other = next(way for way in ("stiffness", "matrix") if way in ways and way != key)
+            yield Fault((key,), f"{key} stands beside {other}. Write one of them.")
+        elif "geometry" in ways:
+            yield from self._computed_faults()
         elif self.stiffness is not None and self.stiffness.written_figures:
             yield from self._unbacked(self.stiffness)
+
+    def _computed_faults(self) -> Iterator[Fault]:
+        """What a computed bearing needs, and what its kind cannot do."""
+        if "kind" not in self.given:
+            yield Fault(("kind",), 'kind is not written. Write kind = "deep groove ball bearing".')
+        kind = KINDS.get(self.kind or "")
+        if kind is None:
+            return
+        if self.geometry is not None:
+            yield from self.geometry.faults_of(kind)
+        if kind.angled and "contact_angle" not in self.given:
+            yield Fault(("contact_angle",), 'contact_angle is not written. Write contact_angle = "12 deg".')
+        elif not kind.angled and "contact_angle" in self.given:
+            yield Fault(("contact_angle",), f"a {self.kind} has no contact angle of its own. Leave it out.")
+        yield from self._unable(kind)
+
+    def _unable(self, kind: BearingKind) -> Iterator[Fault]:
+        holds = set(self.holds or ("radial",))
+        wrong = {"spin", "stops_left", "stops_right"} & holds
+        wrong |= set() if kind.holds_axially else {"axial"} & holds
+        wrong |= {"tilt"} & holds if kind.aligning else set()
+        if wrong:
+            yield Fault(("holds",), f"a {self.kind} does not hold {' and '.join(sorted(wrong))}. Leave it out.")
+        elif "radial" not in holds:
+            yield Fault(("holds",), f'a {self.kind} holds the shaft radially. Write holds = ["radial"].')
+
+    @property
+    def computed(self) -> bool:
+        """Whether its stiffness is computed from what is inside it."""
+        return self.geometry is not None
 
     def _unbacked(self, stiffness: Stiffness) -> Iterator[Fault]:
         """What is held must have a stiffness."""
@@ -170,7 +231,13 @@ class Bearing(Support):
 
     @cached_property
     def law(self) -> NDArray[np.float64]:
-        """The stiffness that is used as a 6 x 6 matrix in SI: (6, 6) [N/m, N, N m/rad]."""
+        """The stiffness that is used as a 6 x 6 matrix in SI: (6, 6) [N/m, N, N m/rad].
+
+        Of a computed bearing only which directions it resists; how stiffly is not known before it is loaded.
+        """
+        if self.computed:
+            tilts = 0.0 if KINDS[self.kind or ""].aligning else 1.0
+            return np.diag(UNKNOWN * self.used * np.array([1, 1, 1, 0, tilts, tilts]))
         matrix, diagonal = self.matrix_si, self.diagonal
         if matrix is not None:
             return matrix

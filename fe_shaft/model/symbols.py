@@ -48,12 +48,12 @@ LATER: dict[str, dict[str, str]] = {
         "speed": "The speed stands in the case.",
     },
     "Bearing": dict.fromkeys(
-        ("catalogue", "geometry", "table", "dynamic_rating", "static_rating", "outside_diameter", "bore", "kind"),
+        ("catalogue", "table", "dynamic_rating", "static_rating", "outside_diameter", "bore"),
         _PLAIN,
     )
     | dict.fromkeys(
-        ("radial_clearance", "contact_angle", "closes_towards", "preload", "housing_tolerance", "temperature"),
-        "Leave it out: the bearing is a linear spring here.",
+        ("closes_towards", "preload", "housing_tolerance", "temperature"),
+        "Leave it out: radial_clearance is that of the bearing as mounted and warm.",
     ),
     "Gear": dict.fromkeys(
         ("profile_shift", "lead_crowning", "helix_slope", "end_relief"),

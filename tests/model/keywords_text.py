@@ -13,6 +13,7 @@ from fe_shaft.model.heading import Heading
 from fe_shaft.model.helix import HelixKind
 from fe_shaft.model.housing import Estimates, Housing, OutputUnits
 from fe_shaft.model.hub import HubKind
+from fe_shaft.model.inside import Geometry, Groove
 from fe_shaft.model.kinds import Choice, Count, Factor, Flag, Kind, Name, Reference, Text
 from fe_shaft.model.limit import Bound, Of
 from fe_shaft.model.lists import Listed, Shares
@@ -28,7 +29,8 @@ from fe_shaft.model.weakening import Keyway, Spline
 from fe_shaft.model.words import Words, holds_list, inner_noun
 
 NOUNS: tuple[type[Words], ...] = (
-    Heading, Segment, Keyway, Spline, Body, *GROUPS.values(), Stiffness, Seat, Matrix, MatrixUnits, Couple, BeltPull,
+    Heading, Segment, Keyway, Spline, Body, Geometry, Groove, *GROUPS.values(), Stiffness, Seat, Matrix, MatrixUnits,
+    Couple, BeltPull,
     Housing, Estimates, OutputUnits,
 )  # fmt: skip
 TARGET = Path("fe_shaft/model/keywords.py")
