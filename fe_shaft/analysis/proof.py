@@ -116,6 +116,9 @@ def _details(solved: Solved, of_spans: Array | None) -> tuple[Array, dict[str, A
     names = solved.table.names
     for k, number in enumerate(solved.plan.bearing):
         stored[names[number]] = per_spring[k] / 2
+    if solved.rolled is not None:
+        energies = solved.rolled.response.energy.T
+        stored |= {names[n]: energy for n, energy in zip(solved.rolled.bearings.numbers, energies, strict=True)}
     for k, number in enumerate(solved.table.seats, start=len(solved.plan.bearing)):
         stored[f"{names[number]}.seat"] = per_spring[k] / 2
     return solution.digits_lost, stored

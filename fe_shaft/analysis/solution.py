@@ -2,20 +2,25 @@
 
 from __future__ import annotations
 
-from typing import TYPE_CHECKING, NamedTuple
+from collections.abc import Sequence
+from typing import TYPE_CHECKING, Any, NamedTuple
 
 import numpy as np
 from numpy.typing import NDArray
 
+from fe_shaft.analysis.computed import Computed, computed_bearings
 from fe_shaft.analysis.discretise import Grid, discretise
 from fe_shaft.analysis.loads import Balance, Loads, apply_loads, balance_torque, twist_reference
 from fe_shaft.analysis.motions import require_held
 from fe_shaft.analysis.supports import SupportPlan, plan_supports
+from fe_shaft.errors import SolutionError
 from fe_shaft.fem.assembly import Constraint, reduce
 from fe_shaft.fem.dofs import NDOF, RX
 from fe_shaft.fem.linear import Solution, solve, weighed_correction
+from fe_shaft.fem.newton import SETTLED, Settled, settle
 from fe_shaft.fem.span import Flexibility, Spans, condense, flexibility
 from fe_shaft.fem.system import Network
+from fe_shaft.laws.response import Response
 from fe_shaft.model.actions import Action, case_names
 
 if TYPE_CHECKING:
@@ -32,6 +37,26 @@ _SPIN = np.arange(NDOF) == RX
 _NO_MOTION = np.zeros(NDOF)
 
 
+class Rolled(NamedTuple):
+    """What the computed bearings came to.
+
+    Attributes
+    ----------
+    bearings : they themselves, b
+    deformation : (n_cases, b, 6) [m, rad]
+    response : energies, forces and tangents there
+    steps, left : (n_cases,), steps of Newton and what is left over of the forces
+    floating : (n_cases, b) [N], force of the springs that hold rings which nothing touches
+    """
+
+    bearings: Computed
+    deformation: Array
+    response: Response
+    steps: NDArray[np.intp]
+    left: Array
+    floating: Array
+
+
 class Solved(NamedTuple):
     """Everything between a model and its results.
 
@@ -44,6 +69,7 @@ class Solved(NamedTuple):
         Prescribed displacements.
     balances : torques that the tool takes out
     spinning : shafts whose spin nothing holds
+    rolled : what the computed bearings came to; None without any
     """
 
     model: Model
@@ -58,6 +84,7 @@ class Solved(NamedTuple):
     offset: Array
     balances: list[Balance]
     spinning: set[str]
+    rolled: Rolled | None = None
 
     @property
     def plan(self) -> SupportPlan:
@@ -88,9 +115,46 @@ def solve_model(model: Model) -> Solved:
     for balance in balances:
         loads.nodal[grid.node_of[balance.part], RX] += balance.torque
     plans = [(plan_supports(table, grid, push), cases) for push, cases in groups]
-    solved = [_solve_group(model, grid, spans, loads, plan, cases, spinning) for plan, cases in plans]
-    solution = solved[0][0] if len(solved) == 1 else _merge([each for each, _ in solved], [cases for _, cases in plans])
-    return Solved(model, acts, grid, give, spans, loads, table, plans, solution, solved[0][1], balances, spinning)
+    rolling = computed_bearings(model)
+    solved = [_solve_group(model, grid, spans, loads, plan, cases, spinning, rolling) for plan, cases in plans]
+    several = [cases for _, cases in plans]
+    solution = solved[0].solution if len(solved) == 1 else _merge([each.solution for each in solved], several)
+    rolled = (
+        None if rolling is None else _rolled(rolling, [each.settled for each in solved], several, case_names(model))
+    )
+    return Solved(
+        model, acts, grid, give, spans, loads, table, plans, solution, solved[0].offset, balances, spinning, rolled
+    )
+
+
+class _Group(NamedTuple):
+    """One group of cases, solved."""
+
+    solution: Solution
+    offset: Array
+    settled: Settled | None
+
+
+def _rolled(
+    bearings: Computed, several: Sequence[Settled | None], cases: Sequence[NDArray[np.intp]], names: Sequence[str]
+) -> Rolled:
+    """What the computed bearings came to, in the model's order of cases; an error where a case did not settle."""
+    order = np.argsort(np.concatenate(cases))
+    found = [each for each in several if each is not None]
+
+    def join(arrays: list[NDArray[Any]]) -> NDArray[Any]:
+        return np.concatenate(arrays)[order]
+
+    left = join([each.left for each in found])
+    if lost := [names[k] for k in np.flatnonzero(~(left <= SETTLED))]:
+        raise SolutionError(
+            f"no trustworthy solution: the computed bearings do not come to rest in case {lost[0]}"
+            f"{f' and {len(lost) - 1} more' if len(lost) > 1 else ''}, where {left.max():.1g} of the forces is left over. "
+            "Look for a bearing that cannot carry its load, or write stiffness = { ... } for it."
+        )
+    deformation = join([each.deformation for each in found])
+    steps, floating = join([each.steps for each in found]), join([each.floating for each in found])
+    return Rolled(bearings, deformation, bearings.respond(deformation), steps, left, floating)
 
 
 def _groups(model: Model) -> list[tuple[dict[str, int], NDArray[np.intp]]]:
@@ -119,19 +183,29 @@ def _solve_group(
     plan: SupportPlan,
     cases: NDArray[np.intp],
     spinning: set[str],
-) -> tuple[Solution, Array]:
+    rolling: Computed | None,
+) -> _Group:
     held = list(plan.constraints)
     for shaft in spinning:
         node, _ = twist_reference(model, grid, shaft)
         held.append(Constraint(node, 0.0, _SPIN, _NO_MOTION))
     reduction = reduce(plan.n_nodes, held)
-    network = Network(plan.n_nodes, spans, grid.left, grid.right, plan.springs, reduction)
+    offset = reduction.offset.reshape(-1, NDOF, 1)
     nodal, deformation = loads.nodal, loads.deformation
     if len(cases) < nodal.shape[2]:
         nodal, deformation = nodal[..., cases], None if deformation is None else deformation[..., cases]
     if plan.n_nodes > len(nodal):
         nodal = np.concatenate([nodal, np.zeros((plan.n_nodes - len(nodal), *nodal.shape[1:]))])
-    return solve(network, nodal, deformation), reduction.offset.reshape(-1, NDOF, 1)
+    if rolling is None:
+        network = Network(plan.n_nodes, spans, grid.left, grid.right, plan.springs, reduction)
+        return _Group(solve(network, nodal, deformation), offset, None)
+    rows = plan.bearing.searchsorted(rolling.numbers)
+    stiffness = plan.springs.stiffness.copy()
+    stiffness[rows] = rolling.reference
+    springs = plan.springs._replace(stiffness=stiffness)
+    network = Network(plan.n_nodes, spans, grid.left, grid.right, springs, reduction)
+    settled = settle(network, rows, lambda e, _: rolling.respond(e), nodal, deformation)
+    return _Group(settled.solution, offset, settled)
 
 
 def _merge(solutions: list[Solution], cases: list[NDArray[np.intp]]) -> Solution:

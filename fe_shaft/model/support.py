@@ -186,6 +186,11 @@ class Bearing(Support):
             yield Fault(("holds",), f'a {self.kind} holds the shaft radially. Write holds = ["radial"].')
 
     @property
+    def slides(self) -> bool:
+        """Whether its outer ring slides in its seat, because it could hold the shaft axially and shall not."""
+        return self.computed and KINDS[self.kind or ""].holds_axially and not self.holds_axially
+
+    @property
     def computed(self) -> bool:
         """Whether its stiffness is computed from what is inside it."""
         return self.geometry is not None
@@ -236,8 +241,9 @@ class Bearing(Support):
         Of a computed bearing only which directions it resists; how stiffly is not known before it is loaded.
         """
         if self.computed:
-            tilts = 0.0 if KINDS[self.kind or ""].aligning else 1.0
-            return np.diag(UNKNOWN * self.used * np.array([1, 1, 1, 0, tilts, tilts]))
+            kind = KINDS[self.kind or ""]
+            able = [kind.holds_axially, True, True, False, not kind.aligning, not kind.aligning]
+            return np.diag(np.array(UNKNOWN) * able)
         matrix, diagonal = self.matrix_si, self.diagonal
         if matrix is not None:
             return matrix

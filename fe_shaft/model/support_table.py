@@ -204,6 +204,16 @@ def _ground_offset(support: Any) -> Array:
 
 def _seat(bearing: Bearing) -> tuple[Array, Bools] | None:
     """Stiffness of a seat and the directions in which it is rigid; None where all of it is rigid."""
+    found = _written_seat(bearing)
+    if not bearing.slides:
+        return found
+    k, rigid = (np.zeros((6, 6)), np.ones(6, dtype=bool)) if found is None else found
+    k[UX, :] = k[:, UX] = 0.0
+    return k, rigid & (np.arange(6) != UX)
+
+
+def _written_seat(bearing: Bearing) -> tuple[Array, Bools] | None:
+    """The same as it is written; rings that slide do not come into it."""
     if bearing.seat is None:
         return None
     if bearing.seat.matrix_si is not None:
