@@ -9,10 +9,10 @@ import numpy as np
 from numpy.typing import NDArray
 
 from fe_shaft.fem.dofs import NDOF, RX, RY, UX
-from fe_shaft.laws.ball import BallElements, BallLaw
+from fe_shaft.laws.ball import BallLaw
 from fe_shaft.laws.response import Response
-from fe_shaft.laws.roller import RollerElements, RollerLaw
-from fe_shaft.model.inside import KINDS, BearingKind
+from fe_shaft.laws.roller import RollerLaw
+from fe_shaft.model.inside import CONFORMITY, KINDS, BearingKind
 from fe_shaft.model.support import Bearing
 from fe_shaft.rolling.ball_geometry import BallGeometry
 from fe_shaft.rolling.roller_geometry import RollerGeometry
@@ -28,6 +28,27 @@ Ints = NDArray[np.intp]
 WORKING = 10e-6
 #: Least axial and tilt stiffness of the reference, as shares of the radial one (tilt: at the pitch radius).
 LEAST = 0.05
+
+
+class Elements(NamedTuple):
+    """Loads [N], contact angles [rad] and pressures [Pa] of the elements of one bearing, (n_cases, z) each."""
+
+    load: Array
+    angle: Array
+    pressure: Array
+
+    def kept(self, number: int, kind: BearingKind) -> Elements:
+        """Without the columns that only fuller bearings have; both contact pairs of one ball as one."""
+        half = self.load.shape[1] // 2 if kind.both_sides or (kind.rollers and kind.aligning) else 0
+        first = Elements(*(each[:, :number] for each in self))
+        if not half:
+            return first
+        second = Elements(*(each[:, half : half + number] for each in self))
+        if kind.aligning:
+            return Elements(*(np.concatenate(pair, axis=1) for pair in zip(first, second, strict=True)))
+        larger = first.load >= second.load
+        angle = np.where(larger, first.angle, second.angle)
+        return Elements(first.load + second.load, angle, np.maximum(first.pressure, second.pressure))
 
 
 class Computed(NamedTuple):
@@ -70,14 +91,18 @@ class Computed(NamedTuple):
             np.concatenate([one.tangent, other.tangent], axis=-3),
         )
 
-    def elements(self, e: Array) -> list[BallElements | RollerElements]:
-        """What each ball or roller bears, a bearing at a time with one bearing each; e (n_cases, b, 6)."""
-        cut, out = self.n_balls, []
-        for k in range(len(self.numbers)):
-            law, own = (self.balls, slice(0, cut)) if k < cut else (self.rollers, slice(cut, None))
-            assert law is not None
-            told = law.elements(e[:, own])
-            out.append(type(told)(*(each[:, k - (own.start or 0)] for each in told)))
+    def elements(self, e: Array) -> dict[int, Elements]:
+        """What each ball or roller bears, by the number of the support; e (n_cases, b, 6)."""
+        out, cut = {}, self.n_balls
+        for law, first in ((self.balls, 0), (self.rollers, cut)):
+            if law is None:
+                continue
+            count = law.geometry.count if isinstance(law, BallLaw) else len(law.geometry.number)
+            told = law.elements(e[:, first : first + count])
+            pressure = np.maximum(told.pressure_inner, told.pressure_outer)
+            for k in range(count):
+                found = Elements(told.load[:, k], told.angle[:, k], pressure[:, k])
+                out[int(self.numbers[first + k])] = found.kept(int(law.geometry.number[k]), self.kinds[first + k])
         return out
 
     @property
@@ -127,41 +152,41 @@ def _angle(bearing: Bearing) -> float:
 
 def _balls(bearings: Sequence[Bearing], kinds: Sequence[BearingKind]) -> BallLaw:
     inside = [bearing.geometry for bearing in bearings if bearing.geometry is not None]
-    given = {
-        "number": [g.elements for g in inside],
-        "ball_diameter": [g.element_diameter.si for g in inside],
-        "pitch_diameter": [g.pitch_diameter.si for g in inside],
-        "contact_angle": [_angle(bearing) for bearing in bearings],
-        "clearance": [_clearance(bearing) for bearing in bearings],
-        "both_sides": [kind.both_sides for kind in kinds],
-        "free_tilt": [kind.aligning for kind in kinds],
-    }
-    grooves = {
-        f"{ring}_conformity": [0.52 if g.groove is None else getattr(g.groove, ring) for g in inside]
+    ball = np.array([g.element_diameter.si for g in inside])
+    pitch = np.array([g.pitch_diameter.si for g in inside])
+    angle = np.array([_angle(bearing) for bearing in bearings])
+    aligning = np.array([kind.aligning for kind in kinds])
+    inner, outer = (
+        np.array([CONFORMITY if g.groove is None else getattr(g.groove, ring) for g in inside])
         for ring in ("inner", "outer")
-    }
-    sphere = [  # the outer raceway of a self-aligning bearing is a sphere about its centre
-        (g.pitch_diameter.si / (2 * np.cos(_angle(b))) + g.element_diameter.si / 2) / g.element_diameter.si
-        for g, b in zip(inside, bearings, strict=True)
-    ]
-    aligning = [kind.aligning for kind in kinds]
-    grooves["outer_conformity"] = np.where(aligning, sphere, grooves["outer_conformity"]).tolist()
-    return BallLaw.of(BallGeometry.of(**given, **grooves))
+    )
+    sphere = pitch / (2 * np.cos(angle) * ball) + 0.5  # a self-aligning outer raceway, about the bearing's centre
+    geometry = BallGeometry.of(
+        [g.elements for g in inside],
+        ball,
+        pitch,
+        inner_conformity=inner,
+        outer_conformity=np.where(aligning, sphere, outer),
+        contact_angle=angle,
+        clearance=[_clearance(bearing) for bearing in bearings],
+        both_sides=[kind.both_sides for kind in kinds],
+        free_tilt=aligning,
+    )
+    return BallLaw.of(geometry)
 
 
 def _rollers(bearings: Sequence[Bearing], kinds: Sequence[BearingKind]) -> RollerLaw:
     each = [
         RollerGeometry.of(
-            number=g.elements,
-            diameter=g.element_diameter.si,
-            length=0.0 if g.roller_length is None else g.roller_length.si,
-            pitch_diameter=g.pitch_diameter.si,
-            E=207e9,
-            nu=0.3,
+            g.elements,
+            g.element_diameter.si,
+            0.0 if g.roller_length is None else g.roller_length.si,
+            g.pitch_diameter.si,
             contact_angle=_angle(bearing),
             clearance=_clearance(bearing),
+            both_sides=kind.aligning,
+            free_tilt=kind.aligning,
             profile=logarithmic if g.profile == "logarithmic" else cylindrical,
-            aligning=kind.aligning,
         )
         for bearing, kind in zip(bearings, kinds, strict=True)
         if (g := bearing.geometry) is not None

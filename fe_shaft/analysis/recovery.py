@@ -24,6 +24,7 @@ from fe_shaft.results.line import Line
 from fe_shaft.results.movement import GearMovement, Movement, SupportMovement
 from fe_shaft.results.parts import PartsFound
 from fe_shaft.results.results import Results
+from fe_shaft.results.rolling import RollingElements
 from fe_shaft.units import show
 
 if TYPE_CHECKING:
@@ -56,6 +57,7 @@ def solve_once(model: Model) -> Results:
         actions=solved.actions,
         proof=proof,
         balances=(*_balance_notes(solved), *shoulder_notes(model)),
+        rolling=_rolling(solved),
         solve_plain=None if solved.grid.pieces.lumps is None else lambda: solve_once(model.plain()),
     )
 
@@ -90,6 +92,24 @@ def _body_give(solved: Solved, gear: Gear) -> Array:
         return np.zeros_like(force)
     radial, tilt = gear.body.give
     return np.asarray(force * np.array([0.0, radial, radial, 0.0, tilt, tilt]))
+
+
+def _rolling(solved: Solved) -> dict[str, RollingElements]:
+    """What the elements of the computed bearings bear."""
+    found = solved.rolled
+    if found is None:
+        return {}
+    out, elements = {}, found.bearings.elements(found.deformation)
+    for k, number in enumerate(found.bearings.numbers.tolist()):
+        own, name = elements[number], solved.table.names[number]
+        kind = found.bearings.kinds[k]
+        count = solved.model[name].geometry.elements
+        place = np.tile(2 * np.pi * np.arange(count) / count, own.load.shape[1] // count)
+        out[name] = RollingElements(
+            name, "rollers" if kind.rollers else "balls", place, *own,
+            found.response.force[:, k], found.deformation[:, k], found.response.tangent[:, k], found.steps,
+        )  # fmt: skip
+    return out
 
 
 def _triple(vector: Array) -> tuple[float, float, float]:

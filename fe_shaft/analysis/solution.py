@@ -146,11 +146,11 @@ def _rolled(
         return np.concatenate(arrays)[order]
 
     left = join([each.left for each in found])
-    if lost := [names[k] for k in np.flatnonzero(~(left <= SETTLED))]:
+    if lost := [names[int(k)] for k in np.flatnonzero(~(left <= SETTLED))]:
         raise SolutionError(
-            f"no trustworthy solution: the computed bearings do not come to rest in case {lost[0]}"
-            f"{f' and {len(lost) - 1} more' if len(lost) > 1 else ''}, where {left.max():.1g} of the forces is left over. "
-            "Look for a bearing that cannot carry its load, or write stiffness = { ... } for it."
+            f"no trustworthy solution: the computed bearings do not come to rest in case {', '.join(lost[:3])}; "
+            f"{left.max():.1g} of the forces is left over. Look for a bearing that cannot carry its load, or write "
+            "stiffness = { ... } for it."
         )
     deformation = join([each.deformation for each in found])
     steps, floating = join([each.steps for each in found]), join([each.floating for each in found])

@@ -21,8 +21,8 @@ from fe_shaft.model.system import Model
 from fe_shaft.model.weakening import Keyway, Spline
 
 __all__ = [
-    "Bearing", "BeltPull", "Body", "Case", "Couple", "Coupling", "Estimates", "Force", "Frame", "Gear", "Geometry", "Groove", "Heading",
-    "Helix", "Housing", "Keyway", "Limit", "Mass", "Material", "Matrix", "MatrixUnits", "Model", "Note", "OutputUnits",
-    "Pin", "Place", "Position", "Pulley", "Seat", "Segment", "SegmentArrays", "Shaft", "Spline", "Sprocket",
-    "Stiffness", "Support",
+    "Bearing", "BeltPull", "Body", "Case", "Couple", "Coupling", "Estimates", "Force", "Frame", "Gear", "Geometry",
+    "Groove", "Heading", "Helix", "Housing", "Keyway", "Limit", "Mass", "Material", "Matrix", "MatrixUnits", "Model",
+    "Note", "OutputUnits", "Pin", "Place", "Position", "Pulley", "Seat", "Segment", "SegmentArrays", "Shaft", "Spline",
+    "Sprocket", "Stiffness", "Support",
 ]  # fmt: skip

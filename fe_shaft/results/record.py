@@ -20,6 +20,7 @@ from fe_shaft.version import VERSION as PROGRAM
 if TYPE_CHECKING:
     from fe_shaft.results.comparison import Comparison, Row
     from fe_shaft.results.results import Results
+    from fe_shaft.results.rolling import RollingElements
     from fe_shaft.results.verdict import Verdict
 
 VERSION = 1
@@ -49,6 +50,7 @@ def results_record(results: Results) -> dict[str, Any]:
         "cases": list(results.cases),
         "parts": {name: _part(results, name) for name in results.parts},
         "by_shoulders": _by_shoulders(results),
+        "rolling": {name: _rolling(each) for name, each in results.rolling.items()},
         "shafts": {name: _shaft(results, name) for name in results.lines},
         "loads": [_load(action) for action in results.actions],
         "verdicts": [_verdict(verdict) for verdict in results.verdicts],
@@ -120,6 +122,22 @@ def _by_shoulders(results: Results) -> dict[str, Any] | None:
     return {
         name: {key: _list(np.asarray(value)) for key, value in of_shoulders(results, name).items()}
         for name in results.parts
+    }
+
+
+def _rolling(each: RollingElements) -> dict[str, Any]:
+    return {
+        "word": each.word,
+        "place": _list(each.place),
+        "load": _list(each.load),
+        "contact_angle": _list(each.angle),
+        "pressure": _list(each.pressure),
+        "force": _list(each.force),
+        "movement": _list(each.movement),
+        "tangent": _list(each.tangent),
+        "tangent_stiffness": _list(each.tangent_stiffness),
+        "secant_stiffness": _list(each.secant_stiffness),
+        "steps": _list(each.steps),
     }
 
 

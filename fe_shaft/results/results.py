@@ -15,6 +15,7 @@ from fe_shaft.results.line import Line
 from fe_shaft.results.parts import Parts
 from fe_shaft.results.proof import Proof
 from fe_shaft.results.quantity import QUANTITIES, Quantity
+from fe_shaft.results.rolling import RollingElements
 from fe_shaft.results.station import ShaftCase, ShaftResults
 from fe_shaft.units import unit_factor
 
@@ -56,6 +57,7 @@ class Results:
     proof : equilibrium, energy, residual, digits
     balances : what the solution adds to the model's notes: torques taken out, shoulders beyond their rule
     verdicts : of the model's limits
+    rolling : what the balls or rollers of the computed bearings bear, by bearing
     solve_plain : solves the same model without its shoulders; None where none counts
     """
 
@@ -67,6 +69,7 @@ class Results:
     proof: Proof
     balances: tuple[Note, ...] = ()
     verdicts: tuple[Verdict, ...] = ()
+    rolling: Mapping[str, RollingElements] = field(default_factory=dict)
     solve_plain: Callable[[], Results] | None = field(default=None, repr=False, compare=False)
 
     @cached_property

@@ -114,8 +114,14 @@ def _last(page: Page, k: int) -> list[str]:
     for label, notes in (("Notes    ", taken), ("Balanced ", balanced)):
         if notes:
             lines += labelled(label, _told(notes))
-    lines += labelled("Proof    ", [results.proof.sentence()])
+    lines += labelled("Proof    ", [results.proof.sentence(), *_settled(results)])
     return lines + by_hand(page, k)
+
+
+def _settled(results: Results) -> list[str]:
+    """In how many steps the computed bearings came to rest."""
+    steps = [int(each.steps.max()) for each in results.rolling.values()]
+    return [f"bearings at rest after {max(steps)} steps"] if steps else []
 
 
 def _told(notes: Sequence[Note]) -> list[str]:

@@ -13,6 +13,7 @@ from fe_shaft.model.actions import shaft_mass
 from fe_shaft.model.gear import Gear
 from fe_shaft.model.groups import noun
 from fe_shaft.model.helix import Helix
+from fe_shaft.model.inside import KINDS
 from fe_shaft.model.loads import Force, Pulley, Sprocket
 from fe_shaft.model.part import Heavy, Part
 from fe_shaft.model.support import Bearing, Support
@@ -96,18 +97,36 @@ def _support(part: Any, level: bool) -> Iterator[str]:
 def _held(part: Support, springs: Springs | None) -> Iterator[str]:
     """What a support holds and how stiffly, what else it resists, what it leaves free."""
     rigid = not isinstance(part, Bearing)
-    by_matrix = isinstance(part, Bearing) and springs is None
+    computed = isinstance(part, Bearing) and part.computed
+    by_matrix = isinstance(part, Bearing) and springs is None and not computed
     holds = []
     for word in part.holds:
         way = "axial" if word in _STOPS else word
         figures = "" if springs is None else _figures(springs, dict(_WAYS).get(way, ()))
         holds.append(f"{_STOPS.get(word, word)} {figures}".rstrip())
     yield f"holds {', '.join(holds)}{', rigid' if rigid else ', by its 6 x 6 matrix' if by_matrix else ''}"
+    if isinstance(part, Bearing) and part.computed:
+        yield from _inside(part)
+        return
     if springs is not None and "tilt" not in part.holds and (tilt := _figures(springs, dict(_WAYS)["tilt"])):
         yield f"resists tilt {tilt}"
     free = [way for way, keys in _WAYS if not by_matrix and _is_free(part, springs, way, keys)]
     if free:
         yield f"free: {', '.join(free)}"
+
+
+def _inside(part: Bearing) -> Iterator[str]:
+    """What is inside a computed bearing."""
+    geometry, kind = part.geometry, KINDS[part.kind or ""]
+    assert geometry is not None
+    word = "rollers" if kind.rollers else "balls"
+    size = f"{geometry.elements} {word} of {geometry.element_diameter.text} on {geometry.pitch_diameter.text}"
+    yield f"computed: {part.kind}, {size}"
+    angle = [] if part.contact_angle is None else [f"contact angle {part.contact_angle.text}"]
+    play = "0" if part.radial_clearance is None else part.radial_clearance.text
+    yield ", ".join([*angle, f"radial clearance {play}"])
+    if part.slides:
+        yield "its outer ring slides"
 
 
 def _is_free(part: Support, springs: Springs | None, way: str, keys: tuple[str, ...]) -> bool:

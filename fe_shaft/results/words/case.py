@@ -11,7 +11,7 @@ from fe_shaft.results.movement import GearMovement
 from fe_shaft.results.words.hand import hand_check, hand_sentence
 from fe_shaft.results.words.layout import paragraph
 from fe_shaft.results.words.page import WORTH, Page, featured
-from fe_shaft.results.words.tables import forces, movement, noise, seats
+from fe_shaft.results.words.tables import forces, movement, noise, rolling, seats
 from fe_shaft.results.words.wording import called, clock_hours, is_level
 from fe_shaft.units import show
 
@@ -29,6 +29,7 @@ def case_lines(page: Page, k: int) -> list[str]:
         lines += ["", *movement(page, shaft, k)]
     for shaft in page.on:
         lines += ["", *forces(page, shaft, k)]
+        lines += _spaced(rolling(page, shaft, k))
         lines += _spaced(seats(page, shaft, k))
     return lines
 

@@ -146,6 +146,28 @@ def forces(page: Page, shaft: str, k: int) -> list[str]:
     )
 
 
+def rolling(page: Page, shaft: str, k: int) -> list[str]:
+    """Table of what the balls and rollers of computed bearings bear; nothing without any."""
+    found = [page.results.rolling[name] for name in page.on[shaft] if name in page.results.rolling]
+    if not found:
+        return []
+    cells = Cells(page, shaft, k)
+    names = [each.name for each in found]
+    columns = [
+        Column("carry", "", tuple(f"{each.carrying[k]} of {each.number} {each.word}" for each in found), "left"),
+        cells.column("most", "force", [float(each.most[k]) for each in found]),
+        Column("pressure", "MPa", tuple(number(float(each.peak_pressure[k]), "MPa") for each in found)),
+        Column("contact", "deg", tuple(number(float(each.steepest[k]), "deg", digits=2) for each in found)),
+        Column("tangent", "N/um", tuple(_stiffness(each.tangent_stiffness[k]) for each in found)),
+        Column("secant", "N/um", tuple(_stiffness(each.secant_stiffness[k]) for each in found)),
+    ]
+    return _drawn(page, "Rolling elements", shaft, k, names, columns)
+
+
+def _stiffness(value: float) -> str:
+    return "-" if np.isnan(value) else number(float(value), "N/um")
+
+
 def seats(page: Page, shaft: str, k: int) -> list[str]:
     """Table of what the seats do, bores out of line included; nothing where they stand still."""
     moved = [
