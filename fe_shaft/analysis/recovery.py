@@ -106,9 +106,18 @@ def _rolling(solved: Solved) -> dict[str, RollingElements]:
         count = solved.model[name].geometry.elements
         place = np.tile(2 * np.pi * np.arange(count) / count, own.load.shape[1] // count)
         out[name] = RollingElements(
-            name, "rollers" if kind.rollers else "balls", place, *own,
-            found.response.force[:, k], found.deformation[:, k], found.response.tangent[:, k], found.steps,
-        )  # fmt: skip
+            name=name,
+            word="rollers" if kind.rollers else "balls",
+            place=place,
+            load=own.load,
+            angle=own.angle,
+            pressure=own.pressure,
+            force=found.response.force[:, k],
+            movement=found.deformation[:, k],
+            tangent=found.response.tangent[:, k],
+            steps=found.steps,
+            held=found.floating[:, k],
+        )
     return out
 
 

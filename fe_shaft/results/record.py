@@ -138,6 +138,7 @@ def _rolling(each: RollingElements) -> dict[str, Any]:
         "tangent_stiffness": _list(each.tangent_stiffness),
         "secant_stiffness": _list(each.secant_stiffness),
         "steps": _list(each.steps),
+        "held": _list(each.held),
     }
 
 

@@ -31,6 +31,8 @@ class RollingElements:
     tangent : (n_cases, 6, 6) [N/m, N, N m/rad]
         Slope of the force: how stiff the bearing is to a small change of its load.
     steps : (n_cases,), steps until the bearings came to rest
+    held : (n_cases,) [N]
+        Force of the spring, a millionth as stiff as the bearing, that keeps a ring in place which nothing touches.
     """
 
     name: str
@@ -43,6 +45,7 @@ class RollingElements:
     movement: Array
     tangent: Array
     steps: NDArray[np.intp]
+    held: Array
 
     @property
     def number(self) -> int:

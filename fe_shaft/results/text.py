@@ -13,6 +13,7 @@ from fe_shaft.results.words.layout import labelled
 from fe_shaft.results.words.page import Page
 from fe_shaft.results.words.verdicts import answer, estimates, sources, verdict_table
 from fe_shaft.results.words.wording import plain
+from fe_shaft.units import show
 
 if TYPE_CHECKING:
     from fe_shaft.model.notes import Note
@@ -121,7 +122,10 @@ def _last(page: Page, k: int) -> list[str]:
 def _settled(results: Results) -> list[str]:
     """In how many steps the computed bearings came to rest."""
     steps = [int(each.steps.max()) for each in results.rolling.values()]
-    return [f"bearings at rest after {max(steps)} steps"] if steps else []
+    if not steps:
+        return []
+    held = max(float(each.held.max()) for each in results.rolling.values())
+    return [f"bearings at rest after {max(steps)} steps, floating rings held by {show(held, 'N', 1)} at most"]
 
 
 def _told(notes: Sequence[Note]) -> list[str]:
