@@ -16,9 +16,10 @@ pitch radius where R belongs; deflections differ by about 1 %.
 
 What degenerates: a thrust bearing (90 degrees) without axial load has no radial stiffness, with it only the term
 Q / |a|. An axial load on a deep-groove bearing under radial load alone meets that term only. A four-point bearing is
-taken as two contact pairs that do not know of each other, although they share a ball. A self-aligning bearing has no
-tilt stiffness; that its rows turn with the inner ring is left out. Centrifugal and gyroscopic loads, ovalisation of
-rings and the film are not in the law.
+taken as two contact pairs that do not know of each other, although they share a ball: exact while one pair of a ball
+bears, 0.1 to 0.2 % soft in energy where both do (tests). A self-aligning bearing has no tilt stiffness; that its rows
+turn with the inner ring is left out. Centrifugal and gyroscopic loads, ovalisation of rings and the film are not in
+the law.
 """
 
 from __future__ import annotations
