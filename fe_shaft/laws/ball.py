@@ -168,7 +168,7 @@ class BallLaw:
         # Twice the room: glibc hands back to the system what exceeds twice the largest block ever freed, and fetching
         # those pages again at every call would take three times as long as all the arithmetic.
         parts = np.empty((2, *d.shape[:-1], 10, d.shape[-1]))[0]
-        energy, fr, fx, ft, k11, k12, k13, k22, k23, k33 = np.moveaxis(parts, -2, 0)
+        energy, fr, fx, ft, k11, k12, k13, k22, k23, k33 = (parts[..., i, :] for i in range(10))
         np.multiply(0.4 * load, d, out=energy)
         np.multiply(load, r, out=fr)
         np.multiply(load, x, out=fx)
