@@ -16,9 +16,10 @@ pitch radius where R belongs; deflections differ by about 1 %.
 
 What degenerates: a thrust bearing (90 degrees) without axial load has no radial stiffness, with it only the term
 Q / |a|. An axial load on a deep-groove bearing under radial load alone meets that term only. A four-point bearing is
-taken as two contact pairs that do not know of each other, although they share a ball. A self-aligning bearing has no
-tilt stiffness; that its rows turn with the inner ring is left out. Centrifugal and gyroscopic loads, ovalisation of
-rings and the film are not in the law.
+taken as two contact pairs that do not know of each other, although they share a ball: exact while one pair of a ball
+bears, 0.1 to 0.2 % soft in energy where both do (tests). A self-aligning bearing has no tilt stiffness; that its rows
+turn with the inner ring is left out. Centrifugal and gyroscopic loads, ovalisation of rings and the film are not in
+the law.
 """
 
 from __future__ import annotations
@@ -162,18 +163,23 @@ class BallLaw:
         stiff = on.stiffness * np.sqrt(d)
         load = stiff * d
         turning = load / way.length
-        r, x = way.outwards, way.along
         bend = 1.5 * stiff - turning
-        k11, k12, k22 = bend * r * r + turning, bend * r * x, bend * x * x + turning
-        k13, k23 = on.lever * k11 - on.radius * k12, on.lever * k12 - on.radius * k22
-        fr, fx = load * r, load * x
-        summed = np.stack(
-            [
-                0.4 * load * d, fr, fx, on.lever * fr - on.radius * fx,
-                k11, k12, k13, k22, k23, on.lever * k13 - on.radius * k23,
-            ],
-            axis=-2,
-        ) @ on.weights  # fmt: skip
+        r, x = way.outwards, way.along
+        # Twice the room: glibc hands back to the system what exceeds twice the largest block ever freed, and fetching
+        # those pages again at every call would take three times as long as all the arithmetic.
+        parts = np.empty((2, *d.shape[:-1], 10, d.shape[-1]))[0]
+        energy, fr, fx, ft, k11, k12, k13, k22, k23, k33 = (parts[..., i, :] for i in range(10))
+        np.multiply(0.4 * load, d, out=energy)
+        np.multiply(load, r, out=fr)
+        np.multiply(load, x, out=fx)
+        np.subtract(on.lever * fr, on.radius * fx, out=ft)
+        np.multiply(bend * r, x, out=k12)
+        np.add(bend * r * r, turning, out=k11)
+        np.add(bend * x * x, turning, out=k22)
+        np.subtract(on.lever * k11, on.radius * k12, out=k13)
+        np.subtract(on.lever * k12, on.radius * k22, out=k23)
+        np.subtract(on.lever * k13, on.radius * k23, out=k33)
+        summed = parts @ on.weights
         flat = summed.reshape(*summed.shape[:-2], 60)
         answer = flat[..., _INDEX] * _SIGN
         return Response(flat[..., 0], answer[..., :6], answer[..., 6:].reshape(*answer.shape[:-1], 6, 6))
