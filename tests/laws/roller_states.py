@@ -16,7 +16,10 @@ CROWNED_MIRRORED = Tabulated(-CROWNED.at[::-1], CROWNED.drop[::-1])
 
 
 def batch(side: float = 1.0) -> RollerGeometry:
-    """Cylindrical, needle, two tapered, spherical and thrust bearings; side = -1 is the batch in a mirror."""
+    """Cylindrical, needle, two tapered, spherical bearings, thrust bearings of one and two directions.
+
+    side = -1 is the batch in a mirror.
+    """
     crowned = CROWNED if side > 0 else CROWNED_MIRRORED
 
     return RollerGeometry.stacked(
@@ -31,7 +34,9 @@ def batch(side: float = 1.0) -> RollerGeometry:
                 16, 0.012, 0.0105, 0.066, contact_angle=0.16, side=side, clearance=30e-6, profile=cylindrical,
                 both_sides=True, free_tilt=True,
             ),
-            RollerGeometry.of(13, 0.008, 0.0075, 0.05, contact_angle=np.pi / 2, side=-side),
+            RollerGeometry.of(
+                13, 0.008, 0.0075, 0.05, contact_angle=np.pi / 2, side=-side, both_sides=[False, True]
+            ),
         ]
     )  # fmt: skip
 

@@ -51,4 +51,5 @@ def _rows(geometry: RollerGeometry, i: int) -> list[tuple[float, float]]:
     angle = float(geometry.side[i] * geometry.contact_angle[i])
     if not geometry.both_sides[i]:
         return [(angle, 0.0)]
-    return [(a, float(geometry.pitch_diameter[i] / 2 * np.tan(a))) for a in (angle, -angle)]
+    offset = float(geometry.pitch_diameter[i] / 2 * np.tan(angle)) if geometry.free_tilt[i] else 0.0
+    return [(angle, offset), (-angle, -offset)]

@@ -62,13 +62,11 @@ def test_work_is_energy(u: Array) -> None:
 
 
 def test_finite(u: Array) -> None:
-    # The fourth bearing is wedged by its interference and never free; those that close to one side only come apart.
-    free = [0, 1, 4]
-    loose = RollerLaw.of(batch())
+    """Bearings that close to one side come apart to the other; those with clearance move a little; one just rests."""
     apart = np.zeros((1, B, 6))
-    apart[:, 2, 0], apart[:, 5, 0], apart[:, 3, 0] = -1e-3, 1e-3, 1e-3
-    apart[:, free] = u[:1, free] * 1e-3
-    contract.finite_everywhere(loose, u, apart)
+    apart[:, [2, 3, 5], 0] = [-1e-3, 1e-3, 1e-3]
+    apart[:, [0, 1, 4]] = u[:1, [0, 1, 4]] * 1e-3
+    contract.finite_everywhere(LAW, u, apart)
 
 
 def test_one_by_one(u: Array) -> None:
@@ -137,8 +135,8 @@ def test_tapered_moment_vanishes_at_the_effective_centre() -> None:
 
 def test_thrust_rollers_feel_no_radial_motion(u: Array) -> None:
     answer = LAW.respond(u)
-    assert not answer.force[:, 5, 1:3].any()
-    assert not answer.tangent[:, 5, 1:3].any()
+    assert not answer.force[:, 5:, 1:3].any()
+    assert not answer.tangent[:, 5:, 1:3].any()
 
 
 def test_convex(u: Array) -> None:
