@@ -123,11 +123,9 @@ class Computed(NamedTuple):
         return out
 
 
-def computed_bearings(model: Model) -> Computed | None:
-    """The computed bearings of a model; None without any."""
+def computed_bearings(model: Model) -> Computed:
+    """The computed bearings of a model that has any."""
     found = [(k, part) for k, part in enumerate(model.supports) if isinstance(part, Bearing) and part.computed]
-    if not found:
-        return None
     found.sort(key=lambda pair: KINDS[pair[1].kind or ""].rollers)
     bearings = [bearing for _, bearing in found]
     kinds = tuple(KINDS[bearing.kind or ""] for bearing in bearings)

@@ -8,7 +8,6 @@ from typing import TYPE_CHECKING, Any, NamedTuple
 import numpy as np
 from numpy.typing import NDArray
 
-from fe_shaft.analysis.computed import Computed, computed_bearings
 from fe_shaft.analysis.discretise import Grid, discretise
 from fe_shaft.analysis.loads import Balance, Loads, apply_loads, balance_torque, twist_reference
 from fe_shaft.analysis.motions import require_held
@@ -20,10 +19,12 @@ from fe_shaft.fem.linear import Solution, solve, weighed_correction
 from fe_shaft.fem.newton import SETTLED, Settled, settle
 from fe_shaft.fem.span import Flexibility, Spans, condense, flexibility
 from fe_shaft.fem.system import Network
-from fe_shaft.laws.response import Response
 from fe_shaft.model.actions import Action, case_names
+from fe_shaft.model.support import Bearing
 
 if TYPE_CHECKING:
+    from fe_shaft.analysis.computed import Computed
+    from fe_shaft.laws.response import Response
     from fe_shaft.model.support_table import SupportTable
     from fe_shaft.model.system import Model
 
@@ -115,7 +116,7 @@ def solve_model(model: Model) -> Solved:
     for balance in balances:
         loads.nodal[grid.node_of[balance.part], RX] += balance.torque
     plans = [(plan_supports(table, grid, push), cases) for push, cases in groups]
-    rolling = computed_bearings(model)
+    rolling = _computed(model)
     solved = [_solve_group(model, grid, spans, loads, plan, cases, spinning, rolling) for plan, cases in plans]
     several = [cases for _, cases in plans]
     solution = solved[0].solution if len(solved) == 1 else _merge([each.solution for each in solved], several)
@@ -125,6 +126,15 @@ def solve_model(model: Model) -> Solved:
     return Solved(
         model, acts, grid, give, spans, loads, table, plans, solution, solved[0].offset, balances, spinning, rolled
     )
+
+
+def _computed(model: Model) -> Computed | None:
+    """The computed bearings of a model; force laws are loaded only where there are any."""
+    if not any(isinstance(part, Bearing) and part.computed for part in model.supports):
+        return None
+    from fe_shaft.analysis.computed import computed_bearings
+
+    return computed_bearings(model)
 
 
 class _Group(NamedTuple):
