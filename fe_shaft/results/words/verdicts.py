@@ -53,11 +53,9 @@ def band_words(each: Estimate) -> str:
     """The band of an estimate: "half to twice", "33 to 38 mm", "none to one piece"."""
     if each.usual:
         return "half to twice"
-    if each.key == "hub":
-        return f"{NONE} to {ONE_PIECE}"
+    if each.ends:
+        return each.ends
     low, high = each.value.low or 0.0, each.value.high or 0.0
-    if each.unit == "mm":
-        return f"full {show(low, each.unit)}, ignored {show(high, each.unit)}"
     return f"{number(low, each.unit)} to {show(high, each.unit)}"
 
 
