@@ -107,14 +107,15 @@ def _last(page: Page, k: int) -> list[str]:
     results = page.results
     estimated = [f"{what}: {', '.join(page.names(24)[name] for name in of)}" for what, of in estimates(results.model)]
     doubts = [note for note in results.balances if note.key == "shoulders"]
-    taken = [*(note for note in results.model.notes if note.key != "estimates"), *doubts]
+    taken = [note for note in results.model.notes if note.key != "estimates"]
+    beyond = [plain(str(note)) for note in doubts]  # each is another matter, so none is left out
     balanced = [note for note in results.balances if note not in doubts]
     lines: list[str] = []
     if estimated:
         lines += labelled("Estimated", estimated)
-    for label, notes in (("Notes    ", taken), ("Balanced ", balanced)):
-        if notes:
-            lines += labelled(label, _told(notes))
+    for label, told in (("Notes    ", [*_told(taken), *beyond]), ("Balanced ", _told(balanced))):
+        if told:
+            lines += labelled(label, told)
     lines += labelled("Proof    ", [results.proof.sentence()])
     return lines + by_hand(page, k)
 
