@@ -160,8 +160,8 @@ def _screened(fields: Fields) -> tuple[Ints, Ints, Ints]:
 
     def acting(to_left: Array, to_right: Array) -> Array:
         if to_right is to_left:
-            return to_left.take(at)
-        return np.where(rightwards, to_right.take(at), to_left.take(at))
+            return np.asarray(to_left.take(at))
+        return np.asarray(np.where(rightwards, to_right.take(at), to_left.take(at)))
 
     s = np.where(rightwards, fields.left.take(to) - fields.right.take(at), fields.left.take(at) - fields.right.take(to))
     np.maximum(s, 0, out=s)
