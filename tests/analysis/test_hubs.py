@@ -132,6 +132,18 @@ def test_a_gear_needs_no_size_for_its_hub():
     np.testing.assert_allclose(tip_of(solved(PLAIN, gear)), tip_of(solved(PLAIN, same)), rtol=1e-11, atol=1e-18)
 
 
+def test_sizes_ends_and_overlaps_of_hubs_that_carry_are_said():
+    gear = fs.Gear("gear", at="120 mm", teeth=40, normal_module="2 mm", facewidth="30 mm", hub="one piece")
+    over = fs.Mass("over", at="195 mm", mass="0 kg", hub=0.5, hub_diameter="60 mm", hub_length="30 mm")
+    said = {note.key: note.sentence for note in solved(PLAIN, gear, over).notes}
+    assert said["gear.hub_diameter"] == "hub as thick as the root of its teeth, 75 mm: gear"
+    assert said["over.hub_length"] == "the hub of over reaches 10 mm over an end"
+    beside = fs.Mass("beside", at="140 mm", mass="0 kg", hub=0.5, hub_diameter="60 mm", hub_length="20 mm")
+    assert "gear and beside overlap" in str([note.sentence for note in solved(PLAIN, gear, beside).notes])
+    quiet = fs.Mass("beside", at="145 mm", mass="0 kg", hub=0.5, hub_diameter="60 mm", hub_length="20 mm")
+    assert not any("hub_length" in note.key for note in solved(PLAIN, gear, quiet).notes)
+
+
 def geared(**words):
     gear = fs.Gear(
         "gear", at="120 mm", teeth=40, normal_module="2 mm", facewidth="20 mm", helix="15 deg left", mate="9 o'clock",
