@@ -144,7 +144,10 @@ def test_sizes_ends_and_overlaps_of_hubs_that_carry_are_said():
     assert not any("hub_length" in note.key for note in solved(PLAIN, gear, quiet).notes)
 
 
-def geared(**words):
+HELD = fs.Pin("held", at="0 mm", holds=["radial", "axial", "tilt"])
+
+
+def geared(held=HELD, limits=(), **words):
     gear = fs.Gear(
         "gear", at="120 mm", teeth=40, normal_module="2 mm", facewidth="20 mm", helix="15 deg left", mate="9 o'clock",
         **words,
@@ -152,8 +155,16 @@ def geared(**words):
     out = fs.Coupling("out", at="0 mm")
     case = fs.Case("run", enters="gear", leaves="out", torque="100 N m", speed="900 rpm", turns="clockwise from left")
     shaft = fs.Shaft("shaft", PLAIN, material="42CrMo4")
-    held = fs.Pin("held", at="0 mm", holds=["radial", "axial", "tilt"])
-    return fs.solve(fs.Model("geared", [shaft, held, gear, out], [case]))
+    return fs.solve(fs.Model("geared", [shaft, held, gear, out], [case], limits=limits))
+
+
+def test_what_stands_on_pins_beneath_a_verdict_is_the_shaft_and_the_gears_body():
+    limits = [fs.Limit("straight", of="gear", quantity="slope", max="1 mrad")]
+    spring = {"radial": "100 N/um", "axial": "100 N/um", "tilt": "5 N m/mrad"}
+    held = fs.Bearing("held", at="0 mm", holds=["radial", "axial", "tilt"], stiffness=spring)
+    rigid, soft = (geared(held, limits, **body) for body in ({}, {"body": {"tilt": "100 N m/mrad"}}))
+    assert "; shaft alone (rigid pins)" in " ".join(str(rigid).split())
+    assert "; shaft and gear body alone (rigid pins)" in " ".join(str(soft).split())
 
 
 def test_a_gear_body_moves_the_rim_by_its_springs_and_the_shaft_not_at_all():
