@@ -80,6 +80,8 @@ class Captions:
         if self.results.plain is not None:
             made = f"of it by shoulders: {show(largest.by_shoulders, self.units.length)}"
             self.overlay.write("made", made, (size[0] - left, top - step), align="right")
+        if any(note.key == "shoulders" for note in self.results.balances):
+            self.overlay.write("doubt", "beyond their rule: see notes", (size[0] - left, top - 2 * step), align="right")
         return (0.0, top - 2.4 * step, size[0], size[1])
 
     def _fitting(self, text: str, room: float) -> str:
