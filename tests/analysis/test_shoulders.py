@@ -131,6 +131,14 @@ def test_every_result_tells_what_of_it_the_shoulders_make():
     assert f"({share:.2g} %) of the tip's movement" in str(fs.compare(cantilever(STEPPED, [TIP]), on.model))
 
 
+def test_a_comparison_on_pins_alone_tells_the_shoulders_share():
+    results = fs.solve(cantilever(STEPPED, [TIP]))
+    made = results.by_shoulders("tip.deflection")[0]
+    share = 100 * made / results.value("tip.deflection")[0]
+    said = " ".join(str(fs.compare(cantilever(STEPPED, [TIP]))).split())
+    assert f"nothing to compare. Shoulders make {made:.3g} um ({share:.2g} %) of the tip's movement." in said
+
+
 def test_a_shaft_without_shoulders_has_nothing_by_them():
     smooth = [fs.Segment("one", length="140 mm", diameter="30 mm")]
     for results in (fs.solve(cantilever(smooth, [TIP])), fs.solve(cantilever(STEPPED, [TIP], shoulders="off"))):
