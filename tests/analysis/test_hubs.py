@@ -132,6 +132,16 @@ def test_a_gear_needs_no_size_for_its_hub():
     np.testing.assert_allclose(tip_of(solved(PLAIN, gear)), tip_of(solved(PLAIN, same)), rtol=1e-11, atol=1e-18)
 
 
+def test_a_hub_on_a_cone_need_only_be_thicker_than_what_lies_in_it():
+    cone = [fs.Segment("cone", length="200 mm", diameter="80 mm", end_diameter="40 mm")]  # 65 to 59 mm in the ring
+    words = {"at": "90 mm", "mass": "0 kg", "hub": "one piece", "hub_length": "30 mm"}
+    carried = solved(cone, fs.Mass("ring", hub_diameter="66 mm", **words))
+    assert carried.model.hubs == ("ring",)
+    assert tip_of(carried)[1] < tip_of(solved(cone))[1]
+    with pytest.raises(fs.ModelError, match="the hub is 64 mm thick and the shaft in it 65 mm"):
+        solved(cone, fs.Mass("ring", hub_diameter="64 mm", **words))
+
+
 def test_sizes_ends_and_overlaps_of_hubs_that_carry_are_said():
     gear = fs.Gear("gear", at="120 mm", teeth=40, normal_module="2 mm", facewidth="30 mm", hub="one piece")
     over = fs.Mass("over", at="195 mm", mass="0 kg", hub=0.5, hub_diameter="60 mm", hub_length="30 mm")
