@@ -10,7 +10,7 @@ from numpy.typing import NDArray
 
 from fe_shaft.analysis.shouldering import contour_of
 from fe_shaft.fem.shoulders import hollow_shoulders, out_of_range
-from fe_shaft.model.notes import Note
+from fe_shaft.model.notes import Note, some_names
 
 if TYPE_CHECKING:
     from fe_shaft.model.shaft import SegmentArrays, Shaft
@@ -18,12 +18,12 @@ if TYPE_CHECKING:
 
 Array = NDArray[np.float64]
 
-#: Said of shoulders beyond the rule's range, by the fields of `OutOfRange`.
+#: Said of shoulders beyond the rule's range, by the fields of `OutOfRange`; segments are the thinner ones beside them.
 BEYOND = {
-    "end_disc": "a thin disc ends the shaft: up to a third too stiff where it is loaded or held",
-    "flange": "a thin flange: up to a third too stiff where it is loaded or held",
-    "hollow_groove": "a narrow groove of a hollow shaft: 5 to 9 % too stiff",
-    "large_step": "a step beyond D/d = 3: outside what the rule was fitted to",
+    "end_disc": "a thin disc ends the shaft beside {}: up to a third too stiff where it is loaded or held",
+    "flange": "a thin flange beside {}: up to a third too stiff where it is loaded or held",
+    "hollow_groove": "a narrow groove of a hollow shaft at {}: 5 to 9 % too stiff",
+    "large_step": "a step beyond D/d = 3 at {}: outside what the rule was fitted to",
 }
 #: A load nearer than this to a shoulder of a hollow shaft, in its smaller diameters, is said.
 NEAR = 0.3
@@ -35,37 +35,28 @@ def shoulder_notes(model: Model) -> Iterator[Note]:
         return
     for shaft in model.shafts:
         arrays = model.working_arrays[shaft.name]
-        for number, words in dict.fromkeys(_drawn_numbers(arrays)):
-            segment = shaft.segments[number].name or f"segment_{number + 1}"
-            yield Note("shoulders", f"{shaft.name}.{segment}: {words}")
+        for words, numbers in _remarks(arrays).items():
+            named = [f"{shaft.name}.{shaft.segments[k].name or f'segment_{k + 1}'}" for k in numbers]
+            yield Note("shoulders", words.format(some_names(named)))
         if not (arrays.bore_left.any() or arrays.bore_right.any()):
             continue
         near = [name for name in _loaded(model, shaft) if _beside(arrays, *_stretch(model, name))]
         if near:
-            told = ", ".join(near[:4]) + (f" and {len(near) - 4} more" if len(near) > 4 else "")
             yield Note(
                 "shoulders",
-                f"{told}: within {NEAR} diameters of a shoulder of a hollow shaft; "
+                f"{some_names(near)}: within {NEAR} diameters of a shoulder of a hollow shaft; "
                 "movement there is off by 2 % as a rule, 12 % at worst",
             )
 
 
-def _drawn_numbers(arrays: SegmentArrays) -> Iterator[tuple[int, str]]:
-    """The remarks with the numbers of the segments on the drawing."""
-    for number, words in _remarks(arrays):
-        yield number if arrays.number is None else int(arrays.number[number]), words
-
-
-def _remarks(arrays: SegmentArrays) -> list[tuple[int, str]]:
-    """Segments whose shoulders leave the range of the rule, and what that means; kept with the arrays."""
+def _remarks(arrays: SegmentArrays) -> dict[str, list[int]]:
+    """What leaves the range of the rule, and at which segments of the drawing; kept with the arrays."""
     if "beyond" not in arrays.memo:
         found = out_of_range(contour_of(arrays))
-        arrays.memo["beyond"] = [
-            (segment, words)
-            for field, words in BEYOND.items()
-            for segment in np.flatnonzero(getattr(found, field).any(axis=-1)).tolist()
-        ]
-    remarks: list[tuple[int, str]] = arrays.memo["beyond"]
+        drawn = np.arange(len(arrays.length)) if arrays.number is None else arrays.number
+        at = {words: getattr(found, field).any(axis=-1) for field, words in BEYOND.items()}
+        arrays.memo["beyond"] = {words: np.unique(drawn[where]).tolist() for words, where in at.items() if where.any()}
+    remarks: dict[str, list[int]] = arrays.memo["beyond"]
     return remarks
 
 

@@ -11,7 +11,14 @@ from fe_shaft.files import write_many
 from fe_shaft.io.model_file import write_text
 from fe_shaft.io.vtk_files import write_vtk
 from fe_shaft.results.record import results_record, to_json
-from fe_shaft.results.table import comparison_table, force_table, movement_table, shoulder_table, station_table
+from fe_shaft.results.table import (
+    comparison_table,
+    force_table,
+    movement_table,
+    note_table,
+    shoulder_table,
+    station_table,
+)
 
 if TYPE_CHECKING:
     from fe_shaft.results.comparison import Comparison
@@ -23,8 +30,9 @@ def export(results: Results, folder: str | os.PathLike[str], comparison: Compari
 
     ``line_CASE.vtu``, ``surface_CASE.vtu``, ``line_cases.pvd``, ``surface_cases.pvd``; ``movement.csv``,
     ``forces.csv``, ``stations.csv`` with their units in the headings, ``shoulders.csv`` with what of every movement and
-    force the shoulders make; ``results.json`` in SI; ``model.toml``, the whole model as solved; with a comparison also
-    ``comparison.csv``. Other files in the folder are left alone.
+    force the shoulders make; ``notes.csv``, what was taken and what is doubtful; ``results.json`` in SI;
+    ``model.toml``, the whole model as solved; with a comparison also ``comparison.csv``. Other files in the folder are
+    left alone.
 
     Parameters
     ----------
@@ -48,6 +56,7 @@ def export(results: Results, folder: str | os.PathLike[str], comparison: Compari
         "forces.csv": force_table(results).to_csv(),
         "stations.csv": station_table(results).to_csv(),
         "shoulders.csv": shoulder_table(results).to_csv(),
+        "notes.csv": note_table(results).to_csv(),
         "results.json": to_json(results_record(results)),
         "model.toml": write_text(results.model),
     }

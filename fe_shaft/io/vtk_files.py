@@ -169,6 +169,9 @@ class _Surfaces:
         self._shafts = _shafts(results)
         self._bodies = [revolve(shaft.line, around=AROUND) for shaft in self._shafts]
         self._rings = [line_fields(s.line, body.places) for s, body in zip(self._shafts, self._bodies, strict=True)]
+        plain = results.plain or results
+        bare = [line_fields(of, body.places)[0] for of, body in zip(plain.lines.values(), self._bodies, strict=True)]
+        self._by_shoulders = [rings[0] - u for rings, u in zip(self._rings, bare, strict=True)]
         starts = np.cumsum([0, *(len(body.points) for body in self._bodies[:-1])])
         self.points = np.concatenate(
             [s.origin + s.to_model(body.points) for s, body in zip(self._shafts, self._bodies, strict=True)]
@@ -188,7 +191,9 @@ class _Surfaces:
         force = force[body.ring]
         fields = _movement(shaft, u[body.ring], number)
         fields["displacement [m]"] = shaft.to_model(body.movement(u))
+        made = body.movement(self._by_shoulders[number][case])
         return fields | {
+            "displacement by shoulders [m]": shaft.to_model(made),
             "axial force [N]": force[:, 0],
             "shear force [N]": np.hypot(force[:, 1], force[:, 2]),
             "torque [N m]": force[:, 3],

@@ -43,5 +43,8 @@ def _segments(segments: Any, path: tuple[str, ...]) -> Iterator[tuple[str, str]]
     for number, segment in enumerate(segments, start=1):
         name = segment.get("name", f"segment_{number}")
         for key, value in segment.items():
-            if key != "name":
-                yield ".".join((*path[1:], name, key)), str(value)
+            here = (*path[1:], name, key)
+            if isinstance(value, Mapping):  # a keyway, a diameter with its band
+                yield from ((".".join((*here, inner)), str(each)) for inner, each in value.items())
+            elif key != "name":
+                yield ".".join(here), str(value)

@@ -6,7 +6,7 @@ from collections.abc import Iterator
 from typing import TYPE_CHECKING, NamedTuple
 
 from fe_shaft.model.gear import Gear
-from fe_shaft.model.hub import hub_figure
+from fe_shaft.model.hub import NONE, ONE_PIECE, hub_figure
 from fe_shaft.model.part import Heavy
 from fe_shaft.model.support import Bearing
 from fe_shaft.model.words import Words
@@ -27,12 +27,14 @@ class Estimate(NamedTuple):
     key : what it is: "radial", "seat tilt", "hub", "keyway"
     value : with its band
     unit : to show it in; empty for a share
+    ends : the band in words, where numbers alone do not say it
     """
 
     thing: str
     key: str
     value: Value
     unit: str
+    ends: str = ""
 
     @property
     def usual(self) -> bool:
@@ -53,14 +55,14 @@ def estimates_of(model: Lookup) -> Iterator[Estimate]:
         if isinstance(part, Gear):
             yield from _springs(part.name, "body ", part.body)
         if isinstance(part, Heavy) and isinstance(part.hub, float):
-            yield Estimate(part.name, "hub", hub_figure(part.hub), "")
+            yield Estimate(part.name, "hub", hub_figure(part.hub), "", f"{NONE} to {ONE_PIECE}")
     for shaft in model.shafts:
         for address, k in shaft.weakened.items():
             segment = shaft.segments[k]
             weak = segment.weakening
             if weak is not None:
                 key = "keyway" if segment.keyway is not None else "spline"
-                yield Estimate(address, key, weak.figure(segment.diameter.si), "mm")
+                yield Estimate(address, key, *weak.figure(segment.diameter.si))
 
 
 def _springs(thing: str, front: str, springs: Words | None) -> Iterator[Estimate]:

@@ -10,6 +10,7 @@ import numpy as np
 
 from fe_shaft.model.case import Case
 from fe_shaft.model.gear import PRESSURE_ANGLE, Gear
+from fe_shaft.model.hub import NONE
 from fe_shaft.model.inside import KINDS
 from fe_shaft.model.loads import Pulley, Sprocket
 from fe_shaft.model.part import Heavy
@@ -17,6 +18,7 @@ from fe_shaft.model.quantity import Quantity
 from fe_shaft.model.shaft import Shaft
 from fe_shaft.model.support import Bearing, Support
 from fe_shaft.model.words import Words
+from fe_shaft.model.working import collar_of
 from fe_shaft.units import Value, show
 
 if TYPE_CHECKING:
@@ -50,14 +52,15 @@ def notes_of(model: Model) -> tuple[Note, ...]:
     return (*_defaults(model), *_weights(model), *_supports(model), *_cases(model), *_faces(model), *_unusual(model))
 
 
-def _names(names: list[str]) -> str:
+def some_names(names: list[str]) -> str:
+    """The first names, and how many more there are."""
     return ", ".join(names[:MOST_NAMED]) + (f" and {len(names) - MOST_NAMED} more" if len(names) > MOST_NAMED else "")
 
 
 def _defaults(model: Model) -> Iterator[Note]:
     rigid = [part.name for part in model.supports if isinstance(part, Bearing) and part.seat is None]
     if rigid:
-        yield Note("housing.seat", f"seats rigid: {_names(rigid)}")
+        yield Note("housing.seat", f"seats rigid: {some_names(rigid)}")
     yield from _bodies(model)
     yield from _weakenings(model)
     default = [shaft.name for shaft in model.shafts if "shear" not in shaft.given]
@@ -70,10 +73,10 @@ def _defaults(model: Model) -> Iterator[Note]:
         )
     plain = [gear.name for gear in model.gears if "pressure_angle" not in gear.given]
     if plain:
-        yield Note(f"{plain[0]}.pressure_angle", f"pressure_angle {PRESSURE_ANGLE} (ISO 53): {_names(plain)}")
+        yield Note(f"{plain[0]}.pressure_angle", f"pressure_angle {PRESSURE_ANGLE} (ISO 53): {some_names(plain)}")
     spur = [gear.name for gear in model.gears if "helix" not in gear.given and gear.form == "cylindrical"]
     if spur:
-        yield Note(f"{spur[0]}.helix", f"spur gears: {_names(spur)}")
+        yield Note(f"{spur[0]}.helix", f"spur gears: {some_names(spur)}")
     for part in model.pulleys:
         if part.belt_pull is not None and "wrap" not in part.given:
             yield Note(f"{part.name}.wrap", f"belt wraps {part.wrap.text}: {part.name}")
@@ -88,12 +91,35 @@ def _bodies(model: Model) -> Iterator[Note]:
     """Gears and what else sits on the shafts: rigid or not, carrying with them or not."""
     rigid = [gear.name for gear in model.gears if gear.body is None]
     if rigid:
-        yield Note(f"{rigid[0]}.body", f"gear bodies rigid: {_names(rigid)}")
+        yield Note(f"{rigid[0]}.body", f"gear bodies rigid: {some_names(rigid)}")
     silent = [name for name in model.hubs if model[name].hub is None]
     if silent:
-        yield Note(f"{silent[0]}.hub", f"hubs do not stiffen the shaft: {_names(silent)}")
+        yield Note(f"{silent[0]}.hub", f"hubs do not stiffen the shaft: {some_names(silent)}")
+    yield from _carrying(model)
     if model.gears:
         yield Note("mate", "mates stand still")
+
+
+def _carrying(model: Model) -> Iterator[Note]:
+    """Of hubs that carry: sizes taken from the gear, ends beyond the shaft, and two of them on one place."""
+    for shaft in model.shafts:
+        end, before = float(shaft.ends[-1]), ("", 0.0)
+        on = [part for part in model.parts_on_shafts if isinstance(part, Heavy) and part.hub not in (None, NONE)]
+        found = [(model.places[part.name].x, part) for part in on if model.places[part.name].shaft == shaft.name]
+        for _, part in sorted(found, key=lambda each: each[0]):
+            collar = collar_of(part, model.places[part.name], end)
+            if collar is None:
+                continue
+            if "hub_diameter" not in part.given:
+                taken = f"hub as thick as the root of its teeth, {show(collar.diameter, 'mm')}: {part.name}"
+                yield Note(f"{part.name}.hub_diameter", taken)
+            over = (part.hub_width or 0.0) - (collar.right - collar.left)
+            if over > 1e-9 * end:
+                yield Note(f"{part.name}.hub_length", f"the hub of {part.name} reaches {show(over, 'mm')} over an end")
+            if before[1] - collar.left > 1e-9 * end:
+                both = f"the hubs of {before[0]} and {part.name} overlap: both stiffen the shaft there"
+                yield Note(f"{part.name}.hub_length", both)
+            before = max(before, (part.name, collar.right), key=lambda each: each[1])
 
 
 def _weakenings(model: Model) -> Iterator[Note]:
@@ -116,14 +142,14 @@ def _is_stepped(shaft: Shaft) -> bool:
 def _weights(model: Model) -> Iterator[Note]:
     heavy = [part.name for part in model.parts_on_shafts if isinstance(part, Heavy) and part.mass is not None]
     if model.gravity is None:
-        what = f"masses without gravity are not weighed: {_names(heavy)}" if heavy else "weights left out"
+        what = f"masses without gravity are not weighed: {some_names(heavy)}" if heavy else "weights left out"
         yield Note("gravity", what)
         return
     light = [
         part.name for part in model.parts_on_shafts if isinstance(part, Gear | Pulley | Sprocket) and part.mass is None
     ]
     if light:
-        yield Note(f"{light[0]}.mass", f"no weight is written: {_names(light)}")
+        yield Note(f"{light[0]}.mass", f"no weight is written: {some_names(light)}")
 
 
 def _supports(model: Model) -> Iterator[Note]:
@@ -138,17 +164,17 @@ def _supports(model: Model) -> Iterator[Note]:
     computed = [part.name for part in model.supports if isinstance(part, Bearing) and part.computed]
     loose = [name for name in computed if model[name].radial_clearance is None]
     if loose:
-        yield Note(f"{loose[0]}.radial_clearance", f"radial clearance 0: {_names(loose)}")
+        yield Note(f"{loose[0]}.radial_clearance", f"radial clearance 0: {some_names(loose)}")
     plain = [name for name in computed if not KINDS[model[name].kind].rollers and model[name].geometry.groove is None]
     if plain:
         yield Note(
-            f"{plain[0]}.geometry.groove", f"groove radii 0.52 of the ball, 0.515 is 7 % stiffer: {_names(plain)}"
+            f"{plain[0]}.geometry.groove", f"groove radii 0.52 of the ball, 0.515 is 7 % stiffer: {some_names(plain)}"
         )
     lines = [name for name in computed if KINDS[model[name].kind].rollers]
     if lines:
-        yield Note(f"{lines[0]}.geometry", f"stiffness of line contacts is known to 10 %: {_names(lines)}")
+        yield Note(f"{lines[0]}.geometry", f"stiffness of line contacts is known to 10 %: {some_names(lines)}")
     if model.estimated:
-        yield Note("estimates", f"estimated or assumed (~): {_names(list(model.estimated))}")
+        yield Note("estimates", f"estimated or assumed (~): {some_names(list(model.estimated))}")
 
 
 def _unused(part: Bearing) -> Iterator[Note]:

@@ -1,5 +1,6 @@
 """A shaft: its segments from left to right, its material, and where it stands in the model."""
 
+import re
 from collections.abc import Iterator, Mapping, Sequence
 from dataclasses import dataclass, field
 from functools import cached_property
@@ -263,6 +264,9 @@ class Shaft(Named):
                 )
             elif name in _SHAFT_KEYS:
                 yield Fault(("segments", index, "name"), f"{quote(name)} is a key of the shaft. Choose another name.")
+            elif (number := _NUMBERED.fullmatch(name)) and int(number[1]) != index + 1:
+                words = f"{quote(name)} is segment {index + 1}, and what segment {number[1]} is called without a name."
+                yield Fault(("segments", index, "name"), f"{words} Choose another name.")
             else:
                 seen[name] = index
 
@@ -365,6 +369,7 @@ def running_sums(values: Array) -> Array:
 
 
 _SHAFT_KEYS = frozenset(Shaft.model_fields)
+_NUMBERED = re.compile(r"segment_([1-9]\d*)")  # how a segment without a name is addressed
 _SHEAR: dict[str | float, float] = {"cowper": np.nan, "none": np.inf}
 
 

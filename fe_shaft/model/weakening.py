@@ -1,5 +1,6 @@
 """Keyways and splines: what weakens a segment from end to end, counted by an effective diameter."""
 
+import math
 from collections.abc import Iterator
 from typing import TYPE_CHECKING, Annotated, ClassVar, Literal, NamedTuple, Self, Unpack
 
@@ -67,15 +68,21 @@ class Weakening(Words):
         """Whether all of it could be read."""
         return True
 
-    def figure(self, diameter: float) -> Value:
-        """The effective diameter as an estimate between full and ignored."""
+    def figure(self, diameter: float) -> tuple[Value, str, str]:
+        """The effective diameter as an estimate, its unit, and its band in words.
+
+        The band reaches from full to ignored, unless one is written with the effective diameter.
+        """
         full, effective, ignored = self.counted(diameter)
-        return Value(effective, show(effective, "mm"), full, ignored, self.source or "")
+        own, text = self.effective_diameter, show(effective, "mm")
+        if own is not None and own.estimated:
+            return Value(effective, text, own.low, own.high, own.source or self.source or ""), "mm", ""
+        ends = f"full {show(full, 'mm')}, ignored {show(ignored, 'mm')}"
+        return Value(effective, text, full, ignored, self.source or ""), "mm", ends
 
     def at_end(self, which: Literal["low", "high"], diameter: float) -> Self:
-        """The same at one end of its band: all of its depth taken away, or ignored."""
-        counted = self.counted(diameter)
-        end = counted.full if which == "low" else counted.ignored
+        """The same at one end of its band: all of its depth taken away, or ignored, unless another one is written."""
+        end = self.figure(diameter)[0].end(which).si
         told = {**self.__dict__, "effective_diameter": Value(end, show(end, "mm", 6))}
         return type(self).model_construct(self.given | {"effective_diameter"}, **told)
 
@@ -91,8 +98,14 @@ class Weakening(Words):
             )
         elif full > diameter.si:
             yield Fault((key,), f"it is thicker than the segment ({diameter.text}). Make it smaller.")
+        if full > inner:
+            yield from self._taken_faults(key, full, diameter)
+
+    def _taken_faults(self, key: str, full: float, diameter: Value) -> Iterator[Fault]:
+        """An effective diameter, or an end of its band, that no depth of the groove can give."""
         taken = self.effective_diameter
-        if taken is not None and full > inner and not full <= taken.si <= diameter.si:
+        ends = [] if taken is None else [taken.si, *((taken.low, taken.high) if taken.estimated else ())]
+        if taken is not None and not all(full <= end <= diameter.si for end in ends if end is not None):
             yield Fault(
                 (key, "effective_diameter"),
                 f"{taken.text} is not between {show(full, 'mm', 6)} (all of it taken away) and {diameter.text} "
@@ -119,6 +132,15 @@ class Keyway(Weakening):
     @override
     def readable(self) -> bool:
         return self.width is not None and self.depth is not None
+
+    @override
+    def faults_in(self, key: str, diameter: Value, bore: Value | None) -> Iterator[Fault]:
+        yield from super().faults_in(key, diameter, bore)
+        count = self.count or 1
+        if self.readable and self.width.si >= diameter.si * math.sin(math.pi / max(count, 2)):  # flank meets flank
+            many = "one keyway" if count == 1 else f"{count} keyways"
+            left = f"{'leaves' if count == 1 else 'leave'} nothing of {diameter.text}"
+            yield Fault((key, "width"), f"{many} of {self.width.text} {left}. Make it narrower.")
 
     @override
     def remaining(self, diameter: float) -> float:

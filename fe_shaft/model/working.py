@@ -49,9 +49,14 @@ def collar_of(part: Part, place: Place, length: float) -> Collar | None:
 
 
 def thickest(arrays: SegmentArrays, left: float, right: float) -> float:
-    """Largest diameter [m] of a shaft between two places."""
+    """Largest diameter [m] of a shaft between two places, of cones what lies between them."""
     inside = (arrays.ends[1:] > left + SAME_PLANE) & (arrays.ends[:-1] < right - SAME_PLANE)
-    return float(np.maximum(arrays.diameter_left, arrays.diameter_right)[inside].max())
+    first, last, at_left, at_right = (
+        of[inside] for of in (arrays.ends[:-1], arrays.ends[1:], arrays.diameter_left, arrays.diameter_right)
+    )
+    slope = (at_right - at_left) / (last - first)
+    ends = at_left + slope * (np.maximum(left, first) - first), at_right - slope * (last - np.minimum(right, last))
+    return float(np.maximum(*ends).max())
 
 
 def working_arrays(

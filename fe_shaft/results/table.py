@@ -115,6 +115,11 @@ def shoulder_table(results: Results) -> Table:
     return Table(columns, tuple(_rows_of_parts(results, shown, made, wanted)))
 
 
+def note_table(results: Results) -> Table:
+    """What was taken and what is doubtful, among it shoulders beyond their rule: the key that changes it, and words."""
+    return Table(("key", "note"), tuple((note.key, note.sentence) for note in results.notes))
+
+
 def _wanted(results: Results) -> list[str]:
     """Every quantity that any part has."""
     kinds = [part.quantities() for part in results.parts.values()]

@@ -112,9 +112,9 @@ def _last(page: Page, k: int) -> list[str]:
     lines: list[str] = []
     if estimated:
         lines += labelled("Estimated", estimated)
-    for label, notes in (("Notes    ", taken), ("Balanced ", balanced)):
-        if notes:
-            lines += labelled(label, _told(notes))
+    for label, told in (("Notes    ", _told(taken)), ("Balanced ", _told(balanced))):
+        if told:
+            lines += labelled(label, told)
     lines += labelled("Proof    ", [results.proof.sentence(), *_settled(results)])
     return lines + by_hand(page, k)
 

@@ -79,9 +79,9 @@ class Captions:
         self.overlay.write("factor", factor, (size[0] - left, top), bold=True, align="right")
         if self.results.plain is not None:
             made = f"of it by shoulders: {show(largest.by_shoulders, self.units.length)}"
-            if self.results.beyond_range:
-                made += ", beyond their rule's range"
             self.overlay.write("made", made, (size[0] - left, top - step), align="right")
+        if self.results.beyond_range:
+            self.overlay.write("doubt", "beyond their rule: see notes", (size[0] - left, top - 2 * step), align="right")
         return (0.0, top - 2.4 * step, size[0], size[1])
 
     def _fitting(self, text: str, room: float) -> str:

@@ -132,7 +132,32 @@ def test_a_gear_needs_no_size_for_its_hub():
     np.testing.assert_allclose(tip_of(solved(PLAIN, gear)), tip_of(solved(PLAIN, same)), rtol=1e-11, atol=1e-18)
 
 
-def geared(**words):
+def test_a_hub_on_a_cone_need_only_be_thicker_than_what_lies_in_it():
+    cone = [fs.Segment("cone", length="200 mm", diameter="80 mm", end_diameter="40 mm")]  # 65 to 59 mm in the ring
+    words = {"at": "90 mm", "mass": "0 kg", "hub": "one piece", "hub_length": "30 mm"}
+    carried = solved(cone, fs.Mass("ring", hub_diameter="66 mm", **words))
+    assert carried.model.hubs == ("ring",)
+    assert tip_of(carried)[1] < tip_of(solved(cone))[1]
+    with pytest.raises(fs.ModelError, match="the hub is 64 mm thick and the shaft in it 65 mm"):
+        solved(cone, fs.Mass("ring", hub_diameter="64 mm", **words))
+
+
+def test_sizes_ends_and_overlaps_of_hubs_that_carry_are_said():
+    gear = fs.Gear("gear", at="120 mm", teeth=40, normal_module="2 mm", facewidth="30 mm", hub="one piece")
+    over = fs.Mass("over", at="195 mm", mass="0 kg", hub=0.5, hub_diameter="60 mm", hub_length="30 mm")
+    said = {note.key: note.sentence for note in solved(PLAIN, gear, over).notes}
+    assert said["gear.hub_diameter"] == "hub as thick as the root of its teeth, 75 mm: gear"
+    assert said["over.hub_length"] == "the hub of over reaches 10 mm over an end"
+    beside = fs.Mass("beside", at="140 mm", mass="0 kg", hub=0.5, hub_diameter="60 mm", hub_length="20 mm")
+    assert "gear and beside overlap" in str([note.sentence for note in solved(PLAIN, gear, beside).notes])
+    quiet = fs.Mass("beside", at="145 mm", mass="0 kg", hub=0.5, hub_diameter="60 mm", hub_length="20 mm")
+    assert not any("hub_length" in note.key for note in solved(PLAIN, gear, quiet).notes)
+
+
+HELD = fs.Pin("held", at="0 mm", holds=["radial", "axial", "tilt"])
+
+
+def geared(held=HELD, limits=(), **words):
     gear = fs.Gear(
         "gear", at="120 mm", teeth=40, normal_module="2 mm", facewidth="20 mm", helix="15 deg left", mate="9 o'clock",
         **words,
@@ -140,8 +165,16 @@ def geared(**words):
     out = fs.Coupling("out", at="0 mm")
     case = fs.Case("run", enters="gear", leaves="out", torque="100 N m", speed="900 rpm", turns="clockwise from left")
     shaft = fs.Shaft("shaft", PLAIN, material="42CrMo4")
-    held = fs.Pin("held", at="0 mm", holds=["radial", "axial", "tilt"])
-    return fs.solve(fs.Model("geared", [shaft, held, gear, out], [case]))
+    return fs.solve(fs.Model("geared", [shaft, held, gear, out], [case], limits=limits))
+
+
+def test_what_stands_on_pins_beneath_a_verdict_is_the_shaft_and_the_gears_body():
+    limits = [fs.Limit("straight", of="gear", quantity="slope", max="1 mrad")]
+    spring = {"radial": "100 N/um", "axial": "100 N/um", "tilt": "5 N m/mrad"}
+    held = fs.Bearing("held", at="0 mm", holds=["radial", "axial", "tilt"], stiffness=spring)
+    rigid, soft = (geared(held, limits, **body) for body in ({}, {"body": {"tilt": "100 N m/mrad"}}))
+    assert "; shaft alone (rigid pins)" in " ".join(str(rigid).split())
+    assert "; shaft and gear body alone (rigid pins)" in " ".join(str(soft).split())
 
 
 def test_a_gear_body_moves_the_rim_by_its_springs_and_the_shaft_not_at_all():

@@ -82,6 +82,17 @@ def test_what_leaves_the_range_of_the_rule_is_told():
     told = [note.sentence for note in results.notes if note.key == "shoulders"]
     assert any("shaft.thin" in sentence and "thin disc" in sentence for sentence in told)
     assert any("D/d = 3" in sentence for sentence in told)
+    sizes = [(60, 50), (80, 30), (4, 120), (80, 30), (3, 26), (80, 30), (4, 120)]
+    bored = [fs.Segment(length=f"{length} mm", diameter=f"{d} mm", bore="20 mm") for length, d in sizes]
+    said = " ".join(str(fs.solve(cantilever(bored, [TIP]))).split())
+    for kind in (
+        "a thin disc ends the shaft beside",
+        "a thin flange beside",
+        "a narrow groove",
+        "a step beyond D/d = 3",
+    ):
+        assert said.count(kind) == 1, kind
+    assert "more like this (shoulders)" not in said
     assert not any("shaft." in note.sentence for note in fs.solve(cantilever(STEPPED, [TIP])).notes)
 
 
@@ -118,6 +129,14 @@ def test_every_result_tells_what_of_it_the_shoulders_make():
     assert f"shoulders: +{1e3 * slope:.3g} mrad" in str(on)
     share = 100 * on.by_shoulders("tip.deflection")[0] / on.value("tip.deflection")[0]
     assert f"({share:.2g} %) of the tip's movement" in str(fs.compare(cantilever(STEPPED, [TIP]), on.model))
+
+
+def test_a_comparison_on_pins_alone_tells_the_shoulders_share():
+    results = fs.solve(cantilever(STEPPED, [TIP]))
+    made = results.by_shoulders("tip.deflection")[0]
+    share = 100 * made / results.value("tip.deflection")[0]
+    said = " ".join(str(fs.compare(cantilever(STEPPED, [TIP]))).split())
+    assert f"nothing to compare. Shoulders make {made:.3g} um ({share:.2g} %) of the tip's movement." in said
 
 
 def test_a_shaft_without_shoulders_has_nothing_by_them():

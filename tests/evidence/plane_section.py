@@ -2,8 +2,10 @@
 
 Saint-Venant's torsion by Prandtl's stress function phi, lap(phi) = -2 in the section and phi = 0 on its edge; the
 torsion constant is 2 int phi (S. P. Timoshenko, J. N. Goodier, Theory of Elasticity, 3rd ed. 1970; from memory). A
-circle has pi d^4 / 32. The section is a polygon with no holes, meshed by Delaunay's triangles over points on its edge
-and a regular pattern inside.
+circle has pi d^4 / 32. A bored section is solved for its warping w instead, lap(w) = 0 with dw/dn = y n_x - x n_y,
+which asks nothing of the hole; the torsion constant is int (x^2 + y^2 + x dw/dy - y dw/dx) (the same source). The
+section is a polygon, with a round bore or none, meshed by Delaunay's triangles over points on its edge and a regular
+pattern inside.
 """
 
 from __future__ import annotations
@@ -43,15 +45,19 @@ def two(v: Any, w: Any) -> Any:
     return 2 * v
 
 
+@LinearForm
+def edgewise(v: Any, w: Any) -> Any:
+    return w.x[1] * v.grad[0] - w.x[0] * v.grad[1]
+
+
 @Functional
 def given(w: Any) -> Any:
     return w.value
 
 
-def section(edge: Array, step: float) -> Section:
-    """Solve a section whose edge is a polygon (n, 2), with triangles of a size."""
-    basis = Basis(_mesh(edge, step), ElementTriP2())
-    phi = solve(*condense(stiffness.assemble(basis), two.assemble(basis), D=basis.get_dofs()))
+def section(edge: Array, step: float, bore: float = 0.0) -> Section:
+    """Solve a section whose edge is a polygon (n, 2), bored or not, with triangles of a size."""
+    basis = Basis(_mesh(edge, step, bore), ElementTriP2())
     x, y = np.asarray(basis.global_coordinates())
 
     def total(values: Array) -> float:
@@ -59,11 +65,22 @@ def section(edge: Array, step: float) -> Section:
 
     area = total(np.ones_like(x))
     centre = total(x) / area, total(y) / area
-    torsion = 2 * total(np.asarray(basis.interpolate(phi)))
+    torsion = total(_twisting(basis, x, y) if bore else _stress_function(basis))
     return Section(torsion, total((y - centre[1]) ** 2), total((x - centre[0]) ** 2))
 
 
-def _mesh(edge: Array, step: float) -> MeshTri:
+def _stress_function(basis: Basis) -> Array:
+    phi = solve(*condense(stiffness.assemble(basis), two.assemble(basis), D=basis.get_dofs()))
+    return 2 * np.asarray(basis.interpolate(phi))
+
+
+def _twisting(basis: Basis, x: Array, y: Array) -> Array:
+    warping = solve(*condense(stiffness.assemble(basis), edgewise.assemble(basis), D=np.array([0])))
+    slope = basis.interpolate(warping).grad
+    return np.asarray(x**2 + y**2 + x * slope[1] - y * slope[0])
+
+
+def _mesh(edge: Array, step: float, bore: float) -> MeshTri:
     on_edge = np.concatenate(
         [
             a + (b - a) * np.arange(n)[:, None] / n
@@ -71,15 +88,19 @@ def _mesh(edge: Array, step: float) -> MeshTri:
             for n in [max(1, int(np.ceil(np.hypot(*(b - a)) / step)))]
         ]
     )
+    around = max(3, int(np.pi * bore / step)) if bore else 0
+    on_edge = np.concatenate([on_edge, arc(bore, 0, 2 * np.pi, around + 1)[:-1]]) if bore else on_edge
+    inside_bore = bore / 2 * np.cos(np.pi / around) if bore else 0.0
     half = np.abs(edge).max()
     x, y = np.meshgrid(np.arange(-half, half, step), np.arange(-half, half, step * np.sqrt(3) / 2))
     inner = np.column_stack([(x + (np.arange(len(x)) % 2)[:, None] * step / 2).ravel(), y.ravel()])
     outline = Path(edge)
-    inner = inner[outline.contains_points(inner)]
+    inner = inner[outline.contains_points(inner) & (np.hypot(*inner.T) >= bore / 2)]
     inner = inner[KDTree(on_edge).query(inner)[0] > 0.6 * step]
     points = np.concatenate([on_edge, inner])
     triangles = Delaunay(points).simplices
-    triangles = triangles[outline.contains_points(points[triangles].mean(axis=1))]
+    middles = points[triangles].mean(axis=1)
+    triangles = triangles[outline.contains_points(middles) & (np.hypot(*middles.T) >= inside_bore)]
     (ax, ay), (bx, by) = ((points[triangles[:, k]] - points[triangles[:, 0]]).T for k in (1, 2))
     triangles = triangles[np.abs(ax * by - ay * bx) > 1e-6 * step**2]
     used, triangles = np.unique(triangles, return_inverse=True)

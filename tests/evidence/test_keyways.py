@@ -14,6 +14,9 @@ import fe_shaft as fs
 from tests.evidence.plane_section import arc, keyed, section, splined
 
 KEYWAYS = [(20, 6, 3.5, 1), (30, 8, 4, 1), (38, 10, 5, 1), (50, 14, 5.5, 1), (80, 22, 9, 1), (38, 10, 5, 2)]
+#: Diameter, width, depth, number of keyways, bore: more wall than a tenth of the diameter left, then less.
+BORED = [(38, 10, 5, 1, 15), (38, 10, 5, 1, 20), (65, 18, 7, 1, 30), (65, 18, 7, 2, 20), (80, 22, 9, 1, 44)]
+THIN = [(38, 10, 5, 1, 24), (38, 10, 5, 1, 26), (80, 22, 9, 1, 56)]
 SPLINES = [(23, 26, 6, 6), (36, 40, 7, 8), (62, 68, 12, 8), (36, 42, 7, 8)]
 
 
@@ -35,6 +38,33 @@ def test_keyways(d, width, depth, count):
     print(f"d {d}: solved {torsion:.2f} in torsion, {bending:.2f} in bending; counts as {1e3 * counted.effective:.2f}")
     assert 1e3 * counted.effective == pytest.approx(torsion, rel=0.015)
     assert 1e3 * counted.full < torsion < bending < d  # the band holds both
+
+
+def bored(d, width, depth, count, bore):
+    """Outer diameters by torsion and bending of a bored shaft with keyways, and what it counts as [mm]."""
+    found = section(keyed(d, width, depth, count), d / 70, bore)
+    torsion, bending = as_diameter(found.torsion + np.pi * bore**4 / 32, found.mean + np.pi * bore**4 / 64)
+    counted = fs.Keyway(width=f"{width} mm", depth=f"{depth} mm", count=count).counted(d / 1e3)
+    print(f"d {d} bore {bore}: {torsion:.2f} in torsion, {bending:.2f} in bending, as {1e3 * counted.effective:.2f}")
+    return torsion, bending, counted
+
+
+def test_a_ring_is_solved():
+    found = section(arc(30, 0, 2 * np.pi, 721)[:-1], 0.5, 20)
+    assert found.torsion == pytest.approx(np.pi * (30**4 - 20**4) / 32, rel=2e-3)
+
+
+@pytest.mark.parametrize("sizes", BORED)
+def test_keyways_of_bored_shafts(sizes):
+    torsion, bending, counted = bored(*sizes)
+    assert 1e3 * counted.effective == pytest.approx(torsion, rel=0.02)
+    assert 1e3 * counted.full < torsion < bending < sizes[0]
+
+
+@pytest.mark.parametrize("sizes", THIN)
+def test_where_little_wall_is_left_the_shaft_is_softer_but_within_the_band(sizes):
+    torsion, bending, counted = bored(*sizes)
+    assert 1e3 * counted.full < torsion < 1e3 * counted.effective < bending
 
 
 @pytest.mark.parametrize(("root", "tip", "width", "count"), SPLINES)

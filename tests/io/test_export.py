@@ -13,7 +13,7 @@ import fe_shaft as fs
 from fe_shaft.io.export import export
 from tests.results.shafts import beam, hostile, layshaft
 
-TABLES = ["movement.csv", "forces.csv", "stations.csv", "shoulders.csv", "results.json", "model.toml"]
+TABLES = ["movement.csv", "forces.csv", "stations.csv", "shoulders.csv", "notes.csv", "results.json", "model.toml"]
 
 
 @pytest.fixture(scope="module")
@@ -26,7 +26,7 @@ def test_everything_is_written_and_named(results, tmp_path):
     written = export(results, folder, fs.compare(layshaft()))
     assert sorted(written) == sorted(folder.iterdir())  # nothing half-written beside them
     names = [path.name for path in written]
-    assert names[-7:] == [*TABLES, "comparison.csv"]
+    assert names[-8:] == [*TABLES, "comparison.csv"]
     for case in results.cases:
         assert {f"line_{case}.vtu", f"surface_{case}.vtu"} <= set(names)
     assert {"line_cases.pvd", "surface_cases.pvd"} <= set(names)
@@ -55,6 +55,17 @@ def test_tables_and_record_are_those_of_the_results(results, tmp_path):
     line = meshio.read(tmp_path / "line_running.vtu")
     up = [float(row["up_um"]) for row in rows if row["case"] == "running"]
     np.testing.assert_allclose(line.point_data["displacement [m]"][:, 1] * 1e6, up, rtol=1e-12)
+
+
+def test_notes_tell_what_leaves_the_range_of_the_shoulders_rule(tmp_path):
+    rim = [fs.Segment(length="60 mm", diameter="40 mm"), fs.Segment("rim", length="4 mm", diameter="140 mm")]
+    held = fs.Pin("held", at="0 mm", holds=["radial", "axial", "tilt"])
+    results = fs.solve(fs.Model("m", [fs.Shaft("s", rim, material="C45"), held, fs.Force("f", at="s.right", up="1 N")]))
+    export(results, tmp_path)
+    with (tmp_path / "notes.csv").open(encoding="utf-8", newline="") as file:
+        rows = [tuple(row.values()) for row in csv.DictReader(file)]
+    assert rows == [(note.key, note.sentence) for note in results.notes]
+    assert any("D/d = 3" in sentence for _, sentence in rows)
 
 
 def test_hostile_names_stay_inside_the_folder(tmp_path):

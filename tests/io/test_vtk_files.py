@@ -96,6 +96,10 @@ def test_surface_has_the_shafts_extent_and_moves_with_its_stations(written):
         arm = mesh.points[ring] - [x, 0, 0]
         u = line.u[0, k]
         np.testing.assert_allclose(mesh.point_data["displacement [m]"][ring], u[:3] + np.cross(u[3:], arm), atol=1e-18)
+        made = (line.u - results.plain.lines["layshaft"].u)[0, k]
+        by = made[:3] + np.cross(made[3:], arm)
+        assert np.abs(by[:, 1:]).max() > 1e-9
+        np.testing.assert_allclose(mesh.point_data["displacement by shoulders [m]"][ring], by, atol=1e-18)
         np.testing.assert_allclose(mesh.point_data["deflection [m]"][ring], line.deflection[0, k], rtol=1e-12)
         np.testing.assert_allclose(mesh.point_data["slope [rad]"][ring], line.slope[0, k], rtol=1e-12)
 

@@ -14,7 +14,7 @@ import numpy as np
 from fe_shaft.laws.roller import RollerLaw
 from fe_shaft.rolling.roller_geometry import RollerGeometry
 
-MOST = 80.0
+MOST = 300.0
 
 
 def fastest(run: Callable[[], Any], repeat: int = 9) -> float:

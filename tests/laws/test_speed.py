@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from benchmarks.bearing_laws import ball_ratio
 
-GENEROUS = 12.0  # about 3 on a quiet machine
+GENEROUS = 60.0  # about 3 on a quiet machine, 14 on a busy one
 
 
 def test_ball_law_against_stacked_solutions() -> None:

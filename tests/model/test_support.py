@@ -108,7 +108,7 @@ def matrix(rows: object, **units: str) -> fs.Matrix:
         (
             {"preload": {"force": "200 N"}},
             "b.preload",
-            "preload is not known yet in this version. Leave it out: the bearing is a linear spring here.",
+            "preload is not known yet in this version. Leave it out: radial_clearance is that of the bearing as mounted and warm.",
         ),
     ],
 )

@@ -50,6 +50,22 @@ def test_they_stand_in_a_model_file_and_come_back(tmp_path):
     assert deeper["shaft"].segments[0].keyway.counted(0.038).full == pytest.approx(0.032)
 
 
+def test_a_band_written_with_an_effective_diameter_counts():
+    key = KEY | {"effective_diameter": {"value": "36 mm", "low": "35 mm", "high": "37 mm"}}
+    held = fs.Pin("held", at="0 mm", holds=["radial", "axial", "tilt"])
+    model = fs.Model("m", [fs.Shaft("shaft", [segment(keyway=key)], material="C45"), held])
+    ends = [model.at_band({"shaft.seat": end})["shaft"].segments[0].keyway for end in ("low", "high")]
+    assert [end.counted(0.038).effective for end in ends] == pytest.approx([0.035, 0.037], rel=1e-12)
+    assert "keyway ~36 mm (35 to 37 mm): shaft.seat" in str(fs.solve(model))
+
+
+def test_no_segment_takes_the_address_of_another_without_a_name():
+    """Its keyway would hide that of the other one."""
+    rows = [fs.Segment("segment_2", length="30 mm", diameter="38 mm"), fs.Segment(length="30 mm", diameter="38 mm")]
+    refused(lambda: fs.Shaft("shaft", rows, material="C45"), "segment_2", "what segment 2 is called without a name")
+    assert fs.Shaft("shaft", rows[::-1], material="C45").segment_index == {"segment_2": 1}
+
+
 @pytest.mark.parametrize(
     ("words", "said"),
     [
@@ -60,6 +76,12 @@ def test_they_stand_in_a_model_file_and_come_back(tmp_path):
         ({"spline": {"root_diameter": "42 mm"}}, "it is thicker than the segment (38 mm)"),
         ({"keyway": KEY | {"effective_diameter": "30 mm"}}, "30 mm is not between 33 mm (all of it taken away)"),
         ({"spline": {"root_diameter": "36 mm", "effective_diameter": "39 mm"}}, "is not between 36 mm"),
+        ({"keyway": {"width": "38 mm", "depth": "5 mm"}}, "one keyway of 38 mm leaves nothing of 38 mm"),
+        ({"keyway": {"width": "27 mm", "depth": "5 mm", "count": 4}}, "4 keyways of 27 mm leave nothing of 38 mm"),
+        (
+            {"keyway": KEY | {"effective_diameter": {"value": "36 mm", "low": "32 mm", "high": "37 mm"}}},
+            "36 mm is not between 33 mm",
+        ),
         ({"keyway": {"depth": "5 mm"}}, 'width is not written. Write width = "10 mm".'),
         ({"keyway": {"width": 10, "depth": "5 mm"}}, '10 has no unit. Write "10 mm".'),
         ({"keyway": KEY | {"count": 9}}, "9 is not possible here. Write 1 to 4."),

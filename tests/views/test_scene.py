@@ -48,6 +48,22 @@ def test_each_half_says_what_it_shows_and_how_far_it_is_exaggerated(scene):
     assert right["bar unit"] == "[um], true"
 
 
+def test_each_half_says_what_the_shoulders_make_and_whether_they_leave_their_rule(scene):
+    for half, results in zip(texts(scene), (pinned(), solved()), strict=True):
+        part = half["factor"].rpartition(" ")[2]
+        if part in results.parts:
+            made = results.by_shoulders(f"{part}.deflection", case="running")
+            assert half["made"] == f"of it by shoulders: {made:.3g} um"
+        assert "doubt" not in half
+    assert any(half["factor"].rpartition(" ")[2] in solved().parts for half in texts(scene))
+    rim = [fs.Segment("thin", length="60 mm", diameter="40 mm"), fs.Segment("rim", length="4 mm", diameter="140 mm")]
+    held = fs.Pin("held", at="0 mm", holds=["radial", "axial", "tilt"])
+    flanged = fs.Model("m", [fs.Shaft("s", rim, material="C45"), held, fs.Force("f", at="60 mm", up="1 kN")])
+    other = Scene(solve(flanged), size=SIZE)
+    assert texts(other)[0]["doubt"] == "beyond their rule: see notes"
+    other.close()
+
+
 def test_place_without_a_name_is_told_when_it_moves_clearly_farther(scene):
     """On pins the free end of the stub moves farthest."""
     line = pinned().lines["layshaft"]

@@ -22,7 +22,7 @@ from fe_shaft.fem.shoulders.rule import (
 )
 
 #: Slices of a cone, and of all cones of a shaft together: of very many, each is but a chord of a curve.
-SLICES, ALL_SLICES = 16, 96
+SLICES, ALL_SLICES = 16, 512
 #: The part of a segment between what its two ends need.
 MIDDLE = 3
 

@@ -130,6 +130,8 @@ def _layer(source: Source, entities: list[Any], layer: object, same: float) -> l
         if len(found) > 1:
             told = ", ".join(found[:8]) + (", ..." if len(found) > 8 else "")
             raise source.error(None, f'lines stand on {len(found)} layers: {told}. Write contour_layer = "{found[0]}".')
+        if not found:
+            _refuse_strange(source, entities)
         name = found[0] if found else ""
     elif not isinstance(layer, str):
         raise source.error(None, f'contour_layer is {thing(layer)}, not text. Write contour_layer = "contour".')
@@ -139,13 +141,18 @@ def _layer(source: Source, entities: list[Any], layer: object, same: float) -> l
             hint = nearest(layer, layers.values())
             raise source.error(None, f"nothing stands on a layer {quote(layer)}. {hint}".rstrip())
     kept = [each for each in entities if _layer_of(each).lower() == name.lower() and each.dxftype() not in REMARKS]
-    strange = next((entity for entity in kept if entity.dxftype() not in LINES), None)
-    if strange is not None:
-        raise source.error(None, f"{name_of(strange)} is not read. Explode it to lines and arcs.")
+    _refuse_strange(source, kept)
     if not kept:
         where = f"layer {quote(name)}" if name else "the drawing"
         raise source.error(None, f"{where} has no line, arc or polyline. Draw the half contour above y = 0.")
     return kept
+
+
+def _refuse_strange(source: Source, entities: list[Any]) -> None:
+    """A spline, a block or the like where the contour should be."""
+    strange = next((entity for entity in entities if entity.dxftype() not in REMARKS.union(LINES)), None)
+    if strange is not None:
+        raise source.error(None, f"{name_of(strange)} is not read. Explode it to lines and arcs.")
 
 
 def _layer_of(entity: Any) -> str:

@@ -32,7 +32,7 @@ def comparison_lines(comparison: Comparison, k: int) -> list[list[str]]:
         return [_changes(comparison), [*_moved(view), *_shoulders(view)], _table(view), _verdicts(view)]
     if not any(isinstance(support, Bearing) for support in comparison.right.model.supports):
         return [
-            ["Every support is a rigid pin already: there is nothing to compare."],
+            ["Every support is a rigid pin already: there is nothing to compare.", *_shoulders(view, one=True)],
             paragraph(holds(view), "  ", first=""),
         ]
     answer = [*paragraph(_answer(view)), *_shoulders(view)]
@@ -66,23 +66,24 @@ def _answer(view: View) -> str:
     return f"{head}{'; '.join([*makes, *less])}."
 
 
-def _shoulders(view: View) -> list[str]:
-    """What of the main movements the shoulders make, on either side."""
+def _shoulders(view: View, *, one: bool = False) -> list[str]:
+    """What of the main movements the shoulders make, on either side; `one`: both are the same."""
     names, told = view.page.names(40), []
-    sides = [side for side in (view.comparison.left, view.comparison.right) if side.plain is not None]
+    both = (view.comparison.left, view.comparison.right)
+    sides = [side for side in both[int(one) :] if side.plain is not None]
     if not sides:
         return []
-    where, between = (" on pins and on bearings:", " and ") if view.comparison.is_pins else ("", ", then ")
-    if len(sides) == 1:
+    where, between = (" on pins and on bearings:", " and ") if view.comparison.is_pins and not one else ("", ", then ")
+    if len(sides) == 1 and not one:
         where = f" in the {view.title(int(view.comparison.left.plain is None))} model"
     for row in view.main_rows():
         made = [float(of_shoulders(side, row.part)["deflection"][view.k]) for side in sides]
+        wholes = [float(side.parts[row.part].deflection[view.k]) for side in sides]
         shares = [
-            f"{view.value(row, one)} ({percent(one / whole)})"
-            for one, side in zip(made, sides, strict=True)
-            if (whole := float(side.parts[row.part].deflection[view.k]))
+            f"{view.value(row, part)} ({percent(part / whole)})" if whole else "0"
+            for part, whole in zip(made, wholes, strict=True)
         ]
-        if shares:
+        if any(wholes):
             told.append(f"{between.join(shares)} of the {names[row.part]}'s movement")
     return paragraph(f"Shoulders make{where} {'; '.join(told)}.") if told else []
 

@@ -8,6 +8,7 @@ from typing import TYPE_CHECKING
 import numpy as np
 
 from fe_shaft.model.estimates import Estimate, estimates_of
+from fe_shaft.model.gear import Gear
 from fe_shaft.model.hub import NONE, ONE_PIECE
 from fe_shaft.results.extremes import largest_along
 from fe_shaft.results.words.layout import Column, fitting, labelled, paragraph, table
@@ -53,11 +54,9 @@ def band_words(each: Estimate) -> str:
     """The band of an estimate: "half to twice", "33 to 38 mm", "none to one piece"."""
     if each.usual:
         return "half to twice"
-    if each.key == "hub":
-        return f"{NONE} to {ONE_PIECE}"
+    if each.ends:
+        return each.ends
     low, high = each.value.low or 0.0, each.value.high or 0.0
-    if each.unit == "mm":
-        return f"full {show(low, each.unit)}, ignored {show(high, each.unit)}"
     return f"{number(low, each.unit)} to {show(high, each.unit)}"
 
 
@@ -181,17 +180,19 @@ def _with_alone(page: Page, verdicts: Sequence[Verdict], lines: list[str]) -> li
     out = lines[:1]
     for verdict, line in zip(verdicts, lines[1:], strict=True):
         out.append(line)
-        told = list(_parts_of(verdict, page.shown.unit(verdict.quantity)))
+        part = page.results.model[verdict.part]
+        alone = "shaft and gear body alone" if isinstance(part, Gear) and part.body is not None else "shaft alone"
+        told = list(_parts_of(verdict, page.shown.unit(verdict.quantity), alone))
         if told:
             out += labelled("  ", [f"counting {verdict.counting}", *told], between="; ")
     return out
 
 
-def _parts_of(verdict: Verdict, unit: str) -> Iterator[str]:
+def _parts_of(verdict: Verdict, unit: str, what: str) -> Iterator[str]:
     """What of a value is the shaft's and what the shoulders', where either differs in three digits."""
     alone, shoulders = verdict.shaft_alone, verdict.by_shoulders
     if alone is not None and abs(alone - verdict.value) > SAME * abs(verdict.value):
-        yield f"shaft alone (rigid pins): {show(alone, unit)}, use {number(verdict.use_of(alone), '')}"
+        yield f"{what} (rigid pins): {show(alone, unit)}, use {number(verdict.use_of(alone), '')}"
     if shoulders is not None and abs(shoulders) > SAME * abs(verdict.value):
         yield f"shoulders: {number(shoulders, unit, sign=True)} {unit}"
     if verdict.hubs is not None and abs(verdict.hubs[0] - verdict.hubs[1]) > SAME * abs(verdict.value):

@@ -94,6 +94,13 @@ def test_what_is_not_read_is_named_with_handle_and_layer() -> None:
     assert re.fullmatch(r"shaft.dxf: INSERT \(handle \w+, layer CONTOUR\) is not read. Explode .*", refused(made))
 
 
+def test_a_drawing_of_blocks_alone_names_the_block() -> None:
+    made = document([])
+    made.blocks.new("B").add_line((0, 0), (1, 1))
+    made.modelspace().add_blockref("B", (0, 0), dxfattribs={"layer": "OUTLINE"})
+    assert re.fullmatch(r"shaft.dxf: INSERT \(handle \w+, layer OUTLINE\) is not read. Explode .*", refused(made))
+
+
 def test_curves_through_points_and_lines_in_space() -> None:
     made = document(STEPPED)
     made.modelspace().add_polyline3d([(0, 0, 0), (1, 1, 1)], dxfattribs={"layer": "contour"})
