@@ -14,6 +14,7 @@ import numpy as np
 from numpy.typing import ArrayLike
 
 from fe_shaft.rolling.arrays import Array, floats
+from fe_shaft.rolling.hertz import conforming
 from fe_shaft.rolling.kinds import Kind
 from fe_shaft.rolling.refusal import positive, within
 
@@ -66,7 +67,7 @@ def ball_factor(
     inner, outer : groove radius over ball diameter, above 0.5
     reduction : lambda, ONE_ROW, TWO_ROWS or SPHERICAL
     """
-    g, fi, fo = floats(g), floats(inner), floats(outer)
+    g, fi, fo = floats(g), conforming(inner), conforming(outer)
     fits = fi / fo * (2 * fo - 1) / (2 * fi - 1)
     both = (1 + (1.04 * ((1 - g) / (1 + g)) ** 1.72 * fits**0.41) ** (10 / 3)) ** -0.3
     inner_only = g**0.3 * (1 - g) ** 1.39 / (1 + g) ** (1 / 3) * (2 * fi / (2 * fi - 1)) ** 0.41

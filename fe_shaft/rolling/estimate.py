@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Callable, Mapping
+from functools import lru_cache
 from types import MappingProxyType
 
 from fe_shaft.rolling import angled_balls, deep_groove, roller_estimates
@@ -22,6 +23,7 @@ RULES: Mapping[Kind, Callable[[Catalogue], Estimate]] = MappingProxyType(
 )
 
 
+@lru_cache(maxsize=256)
 def estimate(kind: Kind, catalogue: Catalogue) -> Estimate:
     """Inner geometry of a bearing, estimated from what is given of it.
 

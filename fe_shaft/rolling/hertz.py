@@ -20,6 +20,7 @@ from numpy.typing import ArrayLike
 from scipy.special import ellipe, elliprd
 
 from fe_shaft.rolling.arrays import Array, floats
+from fe_shaft.rolling.refusal import within
 
 #: Bearing steel as ISO 76 and ISO/TS 16281 take it (from memory).
 YOUNGS_MODULUS, POISSONS_RATIO = 207e9, 0.3
@@ -36,13 +37,26 @@ class Curvature(NamedTuple):
 def inner_curvature(diameter: ArrayLike, gamma: ArrayLike, conformity: ArrayLike) -> Curvature:
     """Of a ball on the inner raceway; gamma is ball diameter * cos(contact angle) / pitch diameter."""
     ball, g = floats(diameter), floats(gamma)
-    return Curvature((2 + 2 * g / (1 - g)) / ball, (2 - 1 / floats(conformity)) / ball)
+    return Curvature((2 + 2 * g / (1 - g)) / ball, (2 - 1 / conforming(conformity)) / ball)
 
 
 def outer_curvature(diameter: ArrayLike, gamma: ArrayLike, conformity: ArrayLike) -> Curvature:
     """Of a ball in the outer raceway."""
     ball, g = floats(diameter), floats(gamma)
-    return Curvature((2 - 2 * g / (1 + g)) / ball, (2 - 1 / floats(conformity)) / ball)
+    return Curvature((2 - 2 * g / (1 + g)) / ball, (2 - 1 / conforming(conformity)) / ball)
+
+
+def conforming(conformity: ArrayLike) -> Array:
+    """Groove radius over ball diameter as an array.
+
+    Raises
+    ------
+    ModelError
+        Where it is 0.5 or less: the ball would not go into its groove.
+    """
+    return within(
+        "conformity", conformity, np.nextafter(0.5, 1), np.inf, "Give groove radius over ball diameter, 0.52."
+    )
 
 
 def axis_ratio(curvature: Curvature) -> Array:

@@ -81,6 +81,16 @@ def test_e_of_angular_contact_bearings() -> None:
     assert np.abs(got.e - flat["e"]).max() <= 0.006
 
 
+def test_e_of_two_rows() -> None:
+    """Balls by their table; other rows e = 1.5 tan(angle), X and Y printed to two digits (ISO 281, from memory)."""
+    case = CASES["iso281_e_two_rows"]
+    got = load_factors.load_factors(Kind.ANGULAR_CONTACT_BALL, np.array(case["angle"]) * DEG, 0.0, 2)
+    assert np.abs(got.e - case["e"]).max() <= 0.03
+    for kind in (Kind.SELF_ALIGNING_BALL, Kind.SPHERICAL_ROLLER):
+        agree(float(load_factors.load_factors(kind, 10 * DEG, 0.0, 2).e), 1.5 * math.tan(10 * DEG), rel=0.02)
+    agree(float(load_factors.load_factors(Kind.TAPERED_ROLLER, 14 * DEG).e), 1.5 * math.tan(14 * DEG), rel=1e-12)
+
+
 def test_a_worked_equivalent_load() -> None:
     """Older tables go by Fa / C0, today's by f0 Fa / C0; with f0 = 12.27 their lines at 0.084 and 1.03 are one."""
     case = CASES["shigley_equivalent_load"]

@@ -119,6 +119,15 @@ def test_two_rows_share_the_width() -> None:
     assert (one.number, one.rows, two.rows) == (two.number, 1, 2)
 
 
+def test_spherical_rollers_are_rated_with_their_own_factor() -> None:
+    """bm 1.15 of ISO 281 (from memory)."""
+    found = estimate(Kind.SPHERICAL_ROLLER, Catalogue(50e-3, 90e-3, width=23e-3, dynamic=1e5, static=1e5, e=0.24))
+    i = found.inside
+    c = dynamic_rating.roller_rating(i.number, i.diameter, i.length, i.pitch_diameter, i.contact_angle, 2, 1.15)
+    assert found.dynamic_ratio == pytest.approx(1e5 / float(c))
+    assert found.static_ratio == pytest.approx(1)
+
+
 def test_a_contact_angle_taken_for_granted_is_told() -> None:
     for kind in (Kind.TAPERED_ROLLER, Kind.SPHERICAL_ROLLER, Kind.SELF_ALIGNING_BALL):
         told = [note for note in estimate(kind, Catalogue(40e-3, 80e-3)).notes if "contact angle was taken" in note]

@@ -122,6 +122,20 @@ def test_a_shaft_colder_than_its_ring_holds_it_less() -> None:
     assert cold.mounted == even.mounted
 
 
+def test_a_warm_housing_of_aluminium_lets_its_ring_go() -> None:
+    """Cold 20 um of interference; 30 K warmer both the fit is looser by 80 mm * 30 K * 10.5e-6."""
+    rings = Rings(BORE, INNER, OUTER, OUTSIDE)
+    seats = Seats(housing_interference=20e-6, housing_outer=110e-3, housing=ALUMINIUM)
+    warm = running_clearance(40e-6, rings, seats, Warmth(inner=30.0, outer=30.0))
+    left = 20e-6 - 80e-3 * 30 * 10.5e-6
+    assert left < 0
+    assert warm.by_housing == 0.0
+    assert float(warm.running) == pytest.approx(40e-6)
+    half = running_clearance(40e-6, rings, seats, Warmth(inner=30.0, outer=30.0, housing=10.0))
+    tight = 20e-6 + 80e-3 * (30 * 12.5e-6 - 10 * 23e-6)
+    assert float(half.by_housing) == pytest.approx(float(press_outer(tight, OUTSIDE, OUTER, 110e-3, ALUMINIUM).loss))
+
+
 def test_many_at_once() -> None:
     rings = Rings(BORE, INNER, OUTER, OUTSIDE)
     got = running_clearance(np.array([6e-6, 13e-6, 24e-6]), rings, Seats(np.array([[2e-6], [30e-6]])))

@@ -130,6 +130,16 @@ def test_lives() -> None:
             "1.16667 pitch diameters cannot be. An element must be smaller.",
         ),
         (
+            lambda: static_rating.factor(0.2, 0.5),
+            "conformity",
+            "0.5 cannot be. Give groove radius over ball diameter, 0.52.",
+        ),
+        (
+            lambda: dynamic_rating.ball_factor(0.2, 0.52, 0.49),
+            "conformity",
+            "0.49 cannot be. Give groove radius over ball diameter, 0.52.",
+        ),
+        (
             lambda: static_rating.ball_rating(0, 7e-3, 60e-3),
             "number",
             "0 cannot be. Give the number of balls of one row.",
