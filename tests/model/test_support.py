@@ -108,7 +108,8 @@ def matrix(rows: object, **units: str) -> fs.Matrix:
         (
             {"preload": {"force": "200 N"}},
             "b.preload",
-            "preload is not known yet in this version. Leave it out: radial_clearance is that of the bearing as mounted and warm.",
+            "preload is not known yet in this version. "
+            "Leave it out: radial_clearance is that of the bearing as mounted and warm.",
         ),
     ],
 )
