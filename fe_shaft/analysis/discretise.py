@@ -20,7 +20,8 @@ from fe_shaft.fem.pieces import CONE_RATIO, Outline, Pieces, Points, Sections
 
 if TYPE_CHECKING:
     from fe_shaft.model.actions import Action
-    from fe_shaft.model.shaft import SegmentArrays, Shaft
+    from fe_shaft.model.segment_arrays import SegmentArrays
+    from fe_shaft.model.shaft import Shaft
     from fe_shaft.model.system import Model
 
 Array = NDArray[np.float64]

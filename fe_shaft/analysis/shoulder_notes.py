@@ -13,7 +13,8 @@ from fe_shaft.fem.shoulders import hollow_shoulders, out_of_range
 from fe_shaft.model.notes import Note, some_names
 
 if TYPE_CHECKING:
-    from fe_shaft.model.shaft import SegmentArrays, Shaft
+    from fe_shaft.model.segment_arrays import SegmentArrays
+    from fe_shaft.model.shaft import Shaft
     from fe_shaft.model.system import Model
 
 Array = NDArray[np.float64]

@@ -12,7 +12,7 @@ from fe_shaft.fem.section import cowper
 from fe_shaft.fem.shoulders import Contour, ShoulderLumps, shoulder_lumps
 
 if TYPE_CHECKING:
-    from fe_shaft.model.shaft import SegmentArrays
+    from fe_shaft.model.segment_arrays import SegmentArrays
 
 Array = NDArray[np.float64]
 Ints = NDArray[np.intp]

@@ -14,7 +14,8 @@ from fe_shaft.model.material import Material
 from fe_shaft.model.notes import Note
 from fe_shaft.model.position import Place, Position
 from fe_shaft.model.segment import Segment
-from fe_shaft.model.shaft import SegmentArrays, Shaft
+from fe_shaft.model.segment_arrays import SegmentArrays
+from fe_shaft.model.shaft import Shaft
 from fe_shaft.model.stiffness import Matrix, MatrixUnits, Seat, Stiffness
 from fe_shaft.model.support import Bearing, Pin, Support
 from fe_shaft.model.system import Model

@@ -22,7 +22,8 @@ from fe_shaft.model.material import BUILT_IN_NAMES, Material, built_in
 from fe_shaft.model.part import Heavy, Part
 from fe_shaft.model.placing import Placing, gone
 from fe_shaft.model.position import Place
-from fe_shaft.model.shaft import SegmentArrays, Shaft
+from fe_shaft.model.segment_arrays import SegmentArrays
+from fe_shaft.model.shaft import Shaft
 from fe_shaft.model.support import Support
 from fe_shaft.model.words import Fault, Named
 from fe_shaft.model.working import collar_of, thickest

@@ -24,7 +24,8 @@ from fe_shaft.model.material import Material
 from fe_shaft.model.part import Heavy, Part
 from fe_shaft.model.position import Place, PositionKind
 from fe_shaft.model.refusal import problem
-from fe_shaft.model.shaft import SegmentArrays, Shaft
+from fe_shaft.model.segment_arrays import SegmentArrays
+from fe_shaft.model.shaft import Shaft
 from fe_shaft.model.support import Support
 from fe_shaft.model.words import Named
 from fe_shaft.model.working import collar_of, thickest, working_arrays

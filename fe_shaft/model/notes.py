@@ -10,7 +10,6 @@ import numpy as np
 
 from fe_shaft.model.case import Case
 from fe_shaft.model.gear import PRESSURE_ANGLE, Gear
-from fe_shaft.model.hub import NONE
 from fe_shaft.model.inside import KINDS
 from fe_shaft.model.loads import Pulley, Sprocket
 from fe_shaft.model.part import Heavy
@@ -18,7 +17,6 @@ from fe_shaft.model.quantity import Quantity
 from fe_shaft.model.shaft import Shaft
 from fe_shaft.model.support import Bearing, Support
 from fe_shaft.model.words import Words
-from fe_shaft.model.working import collar_of
 from fe_shaft.units import Value, show
 
 if TYPE_CHECKING:
@@ -61,8 +59,6 @@ def _defaults(model: Model) -> Iterator[Note]:
     rigid = [part.name for part in model.supports if isinstance(part, Bearing) and part.seat is None]
     if rigid:
         yield Note("housing.seat", f"seats rigid: {some_names(rigid)}")
-    yield from _bodies(model)
-    yield from _weakenings(model)
     default = [shaft.name for shaft in model.shafts if "shear" not in shaft.given]
     if default:
         yield Note(f"{default[0]}.shear", "shear: Cowper")
@@ -85,53 +81,6 @@ def _defaults(model: Model) -> Iterator[Note]:
             yield Note(f"{wheel.name}.pull_factor", f"pull_factor 1: {wheel.name}")
     if any(case.enters_shares and case.leaves_shares for case in model.cases):
         yield Note("efficiency", "efficiency 1")
-
-
-def _bodies(model: Model) -> Iterator[Note]:
-    """Gears and what else sits on the shafts: rigid or not, carrying with them or not."""
-    rigid = [gear.name for gear in model.gears if gear.body is None]
-    if rigid:
-        yield Note(f"{rigid[0]}.body", f"gear bodies rigid: {some_names(rigid)}")
-    silent = [name for name in model.hubs if model[name].hub is None]
-    if silent:
-        yield Note(f"{silent[0]}.hub", f"hubs do not stiffen the shaft: {some_names(silent)}")
-    yield from _carrying(model)
-    if model.gears:
-        yield Note("mate", "mates stand still")
-
-
-def _carrying(model: Model) -> Iterator[Note]:
-    """Of hubs that carry: sizes taken from the gear, ends beyond the shaft, and two of them on one place."""
-    for shaft in model.shafts:
-        end, before = float(shaft.ends[-1]), ("", 0.0)
-        on = [part for part in model.parts_on_shafts if isinstance(part, Heavy) and part.hub not in (None, NONE)]
-        found = [(model.places[part.name].x, part) for part in on if model.places[part.name].shaft == shaft.name]
-        for _, part in sorted(found, key=lambda each: each[0]):
-            collar = collar_of(part, model.places[part.name], end)
-            if collar is None:
-                continue
-            if "hub_diameter" not in part.given:
-                taken = f"hub as thick as the root of its teeth, {show(collar.diameter, 'mm')}: {part.name}"
-                yield Note(f"{part.name}.hub_diameter", taken)
-            over = (part.hub_width or 0.0) - (collar.right - collar.left)
-            if over > 1e-9 * end:
-                yield Note(f"{part.name}.hub_length", f"the hub of {part.name} reaches {show(over, 'mm')} over an end")
-            if before[1] - collar.left > 1e-9 * end:
-                both = f"the hubs of {before[0]} and {part.name} overlap: both stiffen the shaft there"
-                yield Note(f"{part.name}.hub_length", both)
-            before = max(before, (part.name, collar.right), key=lambda each: each[1])
-
-
-def _weakenings(model: Model) -> Iterator[Note]:
-    """Keyways and splines that count by common practice."""
-    for shaft in model.shafts:
-        for address, k in shaft.weakened.items():
-            segment = shaft.segments[k]
-            key, weak = ("keyway", segment.keyway) if segment.keyway is not None else ("spline", segment.spline)
-            if weak is not None and weak.effective_diameter is None:
-                taken = show(weak.counted(segment.diameter.si).effective, "mm")
-                how = f"{key} counts as a diameter of {taken}, {weak.practice}"
-                yield Note(f"{address}.{key}.effective_diameter", f"{how}: {address}")
 
 
 def _is_stepped(shaft: Shaft) -> bool:

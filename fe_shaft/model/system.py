@@ -29,6 +29,7 @@ from fe_shaft.model.notes import Note, notes_of
 from fe_shaft.model.part import Heavy
 from fe_shaft.model.refusal import problem
 from fe_shaft.model.shaft import Shaft
+from fe_shaft.model.shape_notes import shape_notes
 from fe_shaft.model.statics import Statics
 from fe_shaft.model.statics import statics as statics_of
 from fe_shaft.model.summary import summary, summary_html
@@ -145,7 +146,7 @@ class Model(Lookup):
     @cached_property
     def notes(self) -> tuple[Note, ...]:
         """Defaults taken and doubts, each with the key that changes it."""
-        return notes_of(self)
+        return (*notes_of(self), *shape_notes(self))
 
     @cached_property
     def estimated(self) -> tuple[str, ...]:

@@ -15,7 +15,8 @@ from numpy.typing import NDArray
 
 from fe_shaft.model.hub import share_of
 from fe_shaft.model.part import Heavy
-from fe_shaft.model.shaft import Outline, SegmentArrays, Shaft
+from fe_shaft.model.segment_arrays import Outline, SegmentArrays
+from fe_shaft.model.shaft import Shaft
 
 if TYPE_CHECKING:
     from collections.abc import Iterable, Mapping

@@ -98,12 +98,18 @@ def _harmless(text: str) -> str:
 
 
 def movement_table(results: Results) -> Table:
-    """All quantities of all parts: one row a part and case, in the units the model asks for."""
+    """All quantities of all parts: one row a part and case, in the units the model asks for.
+
+    The last columns tell what of deflection, slope and twist the shoulders make; `shoulder_table` tells it of all.
+    """
     shown = Shown.of(results.model)
     wanted = _wanted(results)
+    made = {name: of_shoulders(results, name) for name in results.parts}
     columns = ("case", "part", "kind", "shaft", f"x_{shown.suffix('along')}", *map(shown.heading, wanted))
+    told = [f"{key}_by_shoulders_{shown.heading(key).removeprefix(f'{key}_')}" for key in _MADE]
     rows = _rows_of_parts(results, shown, _all_quantities(results, results.parts), wanted)
-    return Table(columns, tuple(rows))
+    more = _rows_of_parts(results, shown, made, _MADE)
+    return Table((*columns, *told), tuple((*row, *own[5:]) for row, own in zip(rows, more, strict=True)))
 
 
 def shoulder_table(results: Results) -> Table:
@@ -190,6 +196,7 @@ def station_table(results: Results) -> Table:
     return Table(columns, tuple(rows))
 
 
+_MADE = ("deflection", "slope", "twist")
 _BY_SHOULDERS = (("axial", "length"), ("up", "length"), ("front", "length"), ("twist", "angle"))
 _SECTION = (
     ("axial_force", "force"),

@@ -123,3 +123,13 @@ def test_an_empty_gear_body_says_nothing():
         lambda: fs.Gear("g", at="20 mm", teeth=40, normal_module="2 mm", facewidth="20 mm", body={}),
         "g.body", "the table is empty. Write { tilt",
     )  # fmt: skip
+
+
+def test_a_band_that_nothing_reads_is_told():
+    wide = {"value": "80 mm", "low": "70 mm", "high": "90 mm"}
+    held = fs.Pin("held", at="0 mm", holds=["radial", "axial", "tilt"])
+    wheel = fs.Mass("wheel", at="20 mm", mass="1 kg", hub=0.5, hub_diameter=wide, hub_length="20 mm")
+    thick = fs.Segment("thick", length="30 mm", diameter={"value": "40 mm", "low": "39 mm", "high": "41 mm"})
+    shaft = fs.Shaft("shaft", [segment(keyway=KEY), thick], material="C45")
+    told = {note.key for note in fs.Model("m", [shaft, held, wheel]).notes if "band is not used" in note.sentence}
+    assert told == {"wheel.hub_diameter", "shaft.thick.diameter"}

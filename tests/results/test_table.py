@@ -49,7 +49,13 @@ def test_headings_are_the_attributes_of_the_results(results):
     table = movement_table(results)
     assert table.columns[:5] == ("case", "part", "kind", "shaft", "x_mm")
     known = {f"{name}_{QUANTITIES[name].suffix}" for name in QUANTITIES}
-    assert set(table.columns[5:]) <= known
+    assert set(table.columns[5:-3]) <= known
+    made = [results.by_shoulders("wheel.slope", case) for case in results.cases]
+    parts = table.column("part")
+    told = [
+        value for part, value in zip(parts, table.column("slope_by_shoulders_mrad"), strict=True) if part == "wheel"
+    ]
+    assert told == pytest.approx(made)
     assert [type(value) for value in table.column("deflection_um")] == [float] * len(table)
 
 
