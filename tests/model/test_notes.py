@@ -17,7 +17,7 @@ def test_defaults_of_a_plain_model() -> None:
         "housing.seat": "seats rigid: lay_left, lay_right",
         "wheel.body": "gear bodies rigid: wheel, pinion",
         "wheel.hub": "hubs do not stiffen the shaft: wheel",
-        "wheel.hub_diameter": "in one piece its hub is a step of D/d = 4.5, and the shoulder rule was made for 3: wheel",
+        "wheel.hub_diameter": "in one piece its hub is a step of D/d = 4.5, beyond the 3 of the shoulder rule: wheel",
         "mate": "mates stand still",
         "layshaft.shear": "shear: Cowper",
         "shoulders": "shoulders make the shafts softer, by a rule made for this project",
