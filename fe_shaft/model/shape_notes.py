@@ -45,9 +45,7 @@ def _wide_hubs(model: Model) -> Iterator[Note]:
         collar = collar_of(model[name], place, float(model[place.shaft].ends[-1]))
         ratio = 0.0 if collar is None else collar.diameter / thickest(model.segment_arrays[place.shaft], *collar[:2])
         if ratio > LARGEST_STEP and model.shoulders == "on":
-            beyond = (
-                f"in one piece its hub is a step of D/d = {ratio:.2g}, and the shoulder rule was made for 3: {name}"
-            )
+            beyond = f"in one piece its hub is a step of D/d = {ratio:.2g}, beyond the 3 of the shoulder rule: {name}"
             yield Note(f"{name}.hub_diameter", beyond)
 
 
