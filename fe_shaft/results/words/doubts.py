@@ -15,7 +15,7 @@ if TYPE_CHECKING:
 
 LARGE_SLOPE = 0.1  # rad: sine and angle differ by 0.2 %, cosine and 1 by 0.5 %
 LARGE_DEFLECTION = 0.1  # of the shaft's length
-MOST_DOUBTS = 4  # said in print; files hold all
+MOST_DOUBTS = 12  # said in print; files hold all
 
 
 def doubts(page: Page) -> list[str]:
