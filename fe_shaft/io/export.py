@@ -13,6 +13,7 @@ from fe_shaft.io.vtk_files import write_vtk
 from fe_shaft.results.record import results_record, to_json
 from fe_shaft.results.table import (
     comparison_table,
+    element_table,
     force_table,
     movement_table,
     note_table,
@@ -31,8 +32,8 @@ def export(results: Results, folder: str | os.PathLike[str], comparison: Compari
     ``line_CASE.vtu``, ``surface_CASE.vtu``, ``line_cases.pvd``, ``surface_cases.pvd``; ``movement.csv``,
     ``forces.csv``, ``stations.csv`` with their units in the headings, ``shoulders.csv`` with what of every movement and
     force the shoulders make; ``notes.csv``, what was taken and what is doubtful; ``results.json`` in SI;
-    ``model.toml``, the whole model as solved; with a comparison also ``comparison.csv``. Other files in the folder are
-    left alone.
+    ``model.toml``, the whole model as solved; with computed bearings ``elements.csv``, what each ball or roller bears;
+    with a comparison ``comparison.csv``. Other files in the folder are left alone.
 
     Parameters
     ----------
@@ -60,6 +61,8 @@ def export(results: Results, folder: str | os.PathLike[str], comparison: Compari
         "results.json": to_json(results_record(results)),
         "model.toml": write_text(results.model),
     }
+    if results.rolling:
+        texts["elements.csv"] = element_table(results).to_csv()
     if comparison is not None:
         texts["comparison.csv"] = comparison_table(comparison).to_csv()
     try:

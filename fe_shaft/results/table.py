@@ -18,6 +18,7 @@ from fe_shaft.results.movement import SupportMovement
 from fe_shaft.results.of_shoulders import along_of_shoulders, of_shoulders
 from fe_shaft.results.quantity import QUANTITIES
 from fe_shaft.results.shown import Shown
+from fe_shaft.units import unit_factor
 
 if TYPE_CHECKING:
     from fe_shaft.results.comparison import Comparison
@@ -135,6 +136,22 @@ def _wanted(results: Results) -> list[str]:
 def _all_quantities(results: Results, names: Iterable[str]) -> dict[str, dict[str, Array]]:
     parts = {name: results.parts[name] for name in names}
     return {name: {key: np.asarray(part.value(key)) for key in part.quantities()} for name, part in parts.items()}
+
+
+def element_table(results: Results) -> Table:
+    """Every ball and roller of the computed bearings: where it stands (clockwise from 12 o'clock), what it bears."""
+    shown = Shown.of(results.model)
+    force, pressure = shown.factor("force"), unit_factor("pressure", "MPa")
+    degrees = unit_factor("angle", "deg")
+    columns = ("case", "part", "element", "place_deg", f"load_{shown.suffix('force')}", "contact_deg", "pressure_MPa")
+    rows: list[tuple[Cell, ...]] = []
+    for k, case in enumerate(results.cases):
+        for name, of in results.rolling.items():
+            numbers = np.column_stack(
+                [of.place / degrees, of.load[k] / force, of.angle[k] / degrees, of.pressure[k] / pressure]
+            )
+            rows += [(case, name, float(n), *row) for n, row in enumerate(numbers.tolist(), 1)]
+    return Table(columns, tuple(rows))
 
 
 def force_table(results: Results) -> Table:

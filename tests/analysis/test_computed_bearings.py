@@ -1,5 +1,6 @@
 """Bearings computed from what is inside them, in the shaft solution: a published example, statics, rest, and words."""
 
+import csv
 import json
 
 import numpy as np
@@ -107,6 +108,18 @@ def test_less_clearance_is_stiffer_and_pins_are_the_limit():
     bearings = [ball("near", "50 mm", ["radial", "axial"]), ball("far", "250 mm")]
     pins = fs.compare(model(bearings, fs.Force("load", at="150 mm", up="5 kN"))).left["load"].deflection[0]
     assert loose > snug + 15e-6 > tight > pins
+
+
+def test_every_element_stands_in_a_table(tmp_path):
+    results = fs.solve(mixed())
+    paths = fs.export(results, tmp_path)
+    assert tmp_path / "elements.csv" in paths
+    rows = list(csv.DictReader((tmp_path / "elements.csv").read_text(encoding="utf-8").splitlines()))
+    assert len(rows) == 3 * (8 + 14 + 28)
+    own = [float(row["load_N"]) for row in rows if (row["case"], row["part"]) == ("both", "fixed")]
+    np.testing.assert_allclose(own, results.rolling["fixed"].load[0], rtol=1e-12)
+    places = [float(row["place_deg"]) for row in rows if (row["case"], row["part"]) == ("both", "fixed")]
+    np.testing.assert_allclose(places, 45.0 * np.arange(8))
 
 
 def test_words_tables_and_files_tell_what_is_carried():
