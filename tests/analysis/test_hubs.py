@@ -192,3 +192,11 @@ def test_a_gear_body_moves_the_rim_by_its_springs_and_the_shaft_not_at_all():
     assert "of it gear's body" in str(soft)
     assert any(note.key == "gear.body" for note in rigid.notes)
     assert not any(note.key == "gear.body" for note in soft.notes)
+
+
+def test_check_tells_how_large_a_hub_is():
+    shaft = fs.Shaft("shaft", PLAIN, material="42CrMo4")
+    told = str(fs.check(fs.Model("hubs", [shaft, CLAMP, TIP, ring(hub=0.5)])))
+    assert "hub 0.5 of one piece, assumed: 70 mm thick, 30 mm long" in told
+    told = str(fs.check(fs.Model("hubs", [shaft, CLAMP, TIP, ring(hub="one piece")])))
+    assert "hub one piece: 70 mm thick, 30 mm long" in told

@@ -13,6 +13,7 @@ from fe_shaft.model.actions import shaft_mass
 from fe_shaft.model.gear import Gear
 from fe_shaft.model.groups import noun
 from fe_shaft.model.helix import Helix
+from fe_shaft.model.hub import NONE
 from fe_shaft.model.inside import KINDS
 from fe_shaft.model.loads import Force, Pulley, Sprocket
 from fe_shaft.model.part import Heavy, Part
@@ -71,7 +72,7 @@ def _part(model: Model, part: Part) -> PartCheck:
     phrases = next((say for kind, say in _SAYS.items() if isinstance(part, kind)), _nothing)
     words = [*phrases(part, is_level(model, place.shaft))]
     if isinstance(part, Heavy) and part.hub is not None:
-        words.append(f"hub {part.hub}" if isinstance(part.hub, str) else f"hub ~{part.hub:g} of one piece")
+        words.append(_hub(part))
     if isinstance(part, Heavy) and part.mass is not None:
         words += _mass(model, part)
     return PartCheck(part.name, noun(part), place.x, tuple(words))
@@ -202,6 +203,14 @@ def _nothing(part: Any, level: bool) -> Iterator[str]:
 _SAYS: dict[type[Part], Callable[[Any, bool], Iterator[str]]] = {
     Support: _support, Gear: _gear, Pulley: _pulley, Sprocket: _sprocket, Force: _force,
 }  # fmt: skip
+
+
+def _hub(part: Heavy) -> str:
+    """How a hub stiffens, and how large it is."""
+    how = f"hub {part.hub}" if isinstance(part.hub, str) else f"hub {part.hub:g} of one piece, assumed"
+    if part.hub == NONE or part.hub_outside is None or part.hub_width is None:
+        return how
+    return f"{how}: {show(part.hub_outside, 'mm')} thick, {show(part.hub_width, 'mm')} long"
 
 
 def _mass(model: Model, part: Heavy) -> Iterator[str]:
