@@ -14,7 +14,7 @@ import numpy as np
 from fe_shaft.model.groups import noun
 from fe_shaft.results.of_shoulders import of_shoulders
 from fe_shaft.results.quantity import QUANTITIES
-from fe_shaft.results.words.doubts import too_far
+from fe_shaft.results.words.doubts import pressed_too_hard, too_far
 from fe_shaft.version import VERSION as PROGRAM
 
 if TYPE_CHECKING:
@@ -102,7 +102,7 @@ def _head(kind: str) -> dict[str, Any]:
 
 def _doubts(results: Results) -> list[str]:
     far = too_far(results, "mrad", "um", {name: name for name in results.lines})
-    return [*far, *(f"shoulders: {note.sentence}" for note in results.beyond_range)]
+    return [*far, *pressed_too_hard(results), *(f"shoulders: {note.sentence}" for note in results.beyond_range)]
 
 
 def _model(results: Results) -> dict[str, Any]:

@@ -110,6 +110,16 @@ def test_less_clearance_is_stiffer_and_pins_are_the_limit():
     assert loose > snug + 15e-6 > tight > pins
 
 
+def test_dents_are_a_doubt():
+    """4200 MPa for balls, 4000 MPa for rollers (ISO 76, from memory)."""
+    bearings = [ball("near", "50 mm", ["radial", "axial"]), ball("far", "250 mm")]
+    for size, told in (("20 kN", False), ("200 kN", True)):
+        results = fs.solve(model(bearings, fs.Force("load", at="150 mm", up=size)))
+        assert (results.rolling["near"].peak_pressure.max() > 4.2e9) == told
+        assert ("near presses its balls with" in str(results)) is told
+        assert any("leave dents" in doubt for doubt in json.loads(results.to_json())["doubts"]) is told
+
+
 def test_every_element_stands_in_a_table(tmp_path):
     results = fs.solve(mixed())
     paths = fs.export(results, tmp_path)

@@ -15,6 +15,7 @@ if TYPE_CHECKING:
 
 LARGE_SLOPE = 0.1  # rad: sine and angle differ by 0.2 %, cosine and 1 by 0.5 %
 LARGE_DEFLECTION = 0.1  # of the shaft's length
+DENTS = {"balls": 4.2e9, "rollers": 4.0e9}  # Pa, pressures of ISO 76 for a lasting dent of 1e-4 diameters; from memory
 MOST_DOUBTS = 12  # said in print; files hold all
 
 
@@ -23,10 +24,23 @@ def doubts(page: Page) -> list[str]:
     names = page.names(40)
     shown = {shaft: names[shaft] for shaft in page.results.lines}
     found = list(too_far(page.results, page.shown.angle, page.shown.length, shown))
+    found += pressed_too_hard(page.results)
     found += [f"shoulders: {plain(note.sentence)}" for note in page.results.beyond_range]
     if len(found) > MOST_DOUBTS:
         found[MOST_DOUBTS - 1 :] = [f"and {len(found) - MOST_DOUBTS + 1} more like this"]
     return labelled("Doubt    ", found, between="; ") if found else []
+
+
+def pressed_too_hard(results: Results) -> Iterator[str]:
+    """One sentence a computed bearing whose elements leave dents."""
+    for name, each in results.rolling.items():
+        most, limit = float(each.peak_pressure.max()), DENTS[each.word]
+        if most > limit:
+            case = results.cases[int(each.peak_pressure.argmax())]
+            yield (
+                f"{plain(name)} presses its {each.word} with {show(most, 'MPa')} in case {plain(case)}: above "
+                f"{show(limit, 'MPa')} they leave dents (ISO 76)"
+            )
 
 
 def too_far(results: Results, angle: str, length: str, names: Mapping[str, str]) -> Iterator[str]:
