@@ -5,7 +5,6 @@ The measure is one stacked solution of as many 5 x 5 systems with numpy, timed i
 
 from __future__ import annotations
 
-import statistics
 import sys
 import time
 from collections.abc import Callable
@@ -32,14 +31,14 @@ def ball_law(rng: np.random.Generator) -> tuple[BallLaw, np.ndarray]:
 
 
 def in_turn(*runs: Callable[[], Any], repeat: int) -> list[float]:
-    """Median time [ms] of each, run one after the other so that a busy machine slows all of them alike."""
+    """Least processor time [ms] of each, run in turn: what other programs take of the machine is not in it."""
     times: list[list[float]] = [[] for _ in runs]
     for _ in range(repeat):
         for kept, run in zip(times, runs, strict=True):
-            start = time.perf_counter()
+            start = time.process_time()
             run()
-            kept.append(time.perf_counter() - start)
-    return [statistics.median(each) * 1e3 for each in times]
+            kept.append(time.process_time() - start)
+    return [min(each) * 1e3 for each in times]
 
 
 def ball_ratio(repeat: int = 30) -> tuple[float, float, float]:

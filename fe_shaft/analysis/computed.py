@@ -8,13 +8,13 @@ from typing import TYPE_CHECKING, NamedTuple
 import numpy as np
 from numpy.typing import NDArray
 
-from fe_shaft.fem.dofs import NDOF, RX, RY, UX
+from fe_shaft.fem.dofs import NDOF, RY, UX
 from fe_shaft.laws.ball import BallLaw
 from fe_shaft.laws.response import Response
 from fe_shaft.laws.roller import RollerLaw
 from fe_shaft.model.inside import CONFORMITY, KINDS, BearingKind
 from fe_shaft.model.support import Bearing
-from fe_shaft.rolling.ball_geometry import BallGeometry
+from fe_shaft.rolling.ball_geometry import BallGeometry, spherical_conformity
 from fe_shaft.rolling.roller_geometry import RollerGeometry
 from fe_shaft.rolling.roller_profile import cylindrical, logarithmic
 
@@ -57,9 +57,9 @@ class Computed(NamedTuple):
     Attributes
     ----------
     numbers : (b,), their numbers among the supports
-    laws : of the ball bearings and of the roller bearings, None where there are none
+    balls, rollers : laws of the ball bearings and of the roller bearings, None where there are none
     kinds : (b,)
-    pitch_radius : (b,) [m]
+    pitch_radius, clearance : (b,) [m]
     """
 
     numbers: Ints
@@ -97,7 +97,7 @@ class Computed(NamedTuple):
         for law, first in ((self.balls, 0), (self.rollers, cut)):
             if law is None:
                 continue
-            count = law.geometry.count if isinstance(law, BallLaw) else len(law.geometry.number)
+            count = law.geometry.count
             told = law.elements(e[:, first : first + count])
             pressure = np.maximum(told.pressure_inner, told.pressure_outer)
             for k in range(count):
@@ -119,7 +119,6 @@ class Computed(NamedTuple):
         out = np.zeros((len(self.numbers), NDOF, NDOF))
         diagonal = np.stack([axial * able[:, 0], radial, radial, 0 * radial, *[tilt * able[:, 1]] * 2], axis=-1)
         out[:, np.arange(NDOF), np.arange(NDOF)] = diagonal
-        out[:, RX, RX] = 0.0
         return out
 
 
@@ -158,13 +157,12 @@ def _balls(bearings: Sequence[Bearing], kinds: Sequence[BearingKind]) -> BallLaw
         np.array([CONFORMITY if g.groove is None else getattr(g.groove, ring) for g in inside])
         for ring in ("inner", "outer")
     )
-    sphere = pitch / (2 * np.cos(angle) * ball) + 0.5  # a self-aligning outer raceway, about the bearing's centre
     geometry = BallGeometry.of(
         [g.elements for g in inside],
         ball,
         pitch,
         inner_conformity=inner,
-        outer_conformity=np.where(aligning, sphere, outer),
+        outer_conformity=np.where(aligning, spherical_conformity(ball, pitch, angle), outer),
         contact_angle=angle,
         clearance=[_clearance(bearing) for bearing in bearings],
         both_sides=[kind.both_sides for kind in kinds],

@@ -26,8 +26,7 @@ from fe_shaft.model.segment_arrays import SegmentArrays
 from fe_shaft.model.shaft import Shaft
 from fe_shaft.model.support import Support
 from fe_shaft.model.words import Fault, Named
-from fe_shaft.model.working import collar_of, thickest
-from fe_shaft.units import show
+from fe_shaft.model.working import idle_hub
 
 Array = NDArray[np.float64]
 _MODEL_KEYS = frozenset((*Heading.model_fields, *GROUPS))  # no names for parts
@@ -180,18 +179,9 @@ class Assembly:
     def _hubs(self) -> None:
         """A hub that is to carry must reach out of its shaft."""
         for part in self.parts.values():
-            arrays = self.segment_arrays[self.places[part.name].shaft]
-            collar = collar_of(part, self.places[part.name], float(arrays.ends[-1]))
-            if collar is None or not collar.share:
-                continue
-            shaft = thickest(arrays, collar.left, collar.right)
-            if collar.diameter <= shaft:
-                self.tell(
-                    part,
-                    "hub",
-                    f"the hub is {show(collar.diameter, 'mm', 4)} thick and the shaft in it {show(shaft, 'mm', 4)}, so "
-                    'nothing of it can carry. Write hub = "none", or the right hub_diameter.',
-                )
+            place = self.places[part.name]
+            if sentence := idle_hub(part, place, self.segment_arrays[place.shaft]):
+                self.tell(part, "hub", sentence)
 
     # ---- cases
 

@@ -17,6 +17,7 @@ from fe_shaft.model.hub import share_of
 from fe_shaft.model.part import Heavy
 from fe_shaft.model.segment_arrays import Outline, SegmentArrays
 from fe_shaft.model.shaft import Shaft
+from fe_shaft.units import show
 
 if TYPE_CHECKING:
     from collections.abc import Iterable, Mapping
@@ -58,6 +59,20 @@ def thickest(arrays: SegmentArrays, left: float, right: float) -> float:
     slope = (at_right - at_left) / (last - first)
     ends = at_left + slope * (np.maximum(left, first) - first), at_right - slope * (last - np.minimum(right, last))
     return float(np.maximum(*ends).max())
+
+
+def idle_hub(part: Part, place: Place, arrays: SegmentArrays) -> str | None:
+    """The sentence about a hub that is to carry, but does not reach out of its shaft."""
+    collar = collar_of(part, place, float(arrays.ends[-1]))
+    if collar is None or not collar.share:
+        return None
+    shaft = thickest(arrays, collar.left, collar.right)
+    if collar.diameter > shaft:
+        return None
+    return (
+        f"the hub is {show(collar.diameter, 'mm', 4)} thick and the shaft in it {show(shaft, 'mm', 4)}, so nothing of "
+        'it can carry. Write hub = "none", or the right hub_diameter.'
+    )
 
 
 def working_arrays(

@@ -142,6 +142,11 @@ class BallGeometry:
         return type(self)(**told)
 
 
+def spherical_conformity(ball: Array, pitch: Array, angle: Array) -> Array:
+    """Radius of a spherical outer raceway about the bearing's centre over the ball's diameter, (b,)."""
+    return np.asarray(pitch / (2 * np.cos(angle) * ball) + 0.5)
+
+
 def self_aligning(
     number: ArrayLike,
     ball_diameter: ArrayLike,
@@ -164,8 +169,8 @@ def self_aligning(
         Of the ball centres; the sphere's radius is pitch / (2 cos contact angle) + D / 2.
     """
     ball, pitch, angle = (np.asarray(each, dtype=float) for each in (ball_diameter, pitch_diameter, contact_angle))
-    sphere = pitch / (2 * np.cos(angle)) + ball / 2
     return BallGeometry.of(
-        number, ball, pitch, inner_conformity=inner_conformity, outer_conformity=sphere / ball, contact_angle=angle,
+        number, ball, pitch, inner_conformity=inner_conformity,
+        outer_conformity=spherical_conformity(ball, pitch, angle), contact_angle=angle,
         clearance=clearance, both_sides=True, free_tilt=True, youngs=youngs, poisson=poisson, first=first,
     )  # fmt: skip

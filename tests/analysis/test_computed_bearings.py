@@ -62,7 +62,8 @@ def test_balls_rollers_and_barrels_on_one_shaft():
     assert results.proof.worst < 1e-9
     for name in ("fixed", "rollers", "barrels"):
         found = results.rolling[name]
-        np.testing.assert_allclose(results[name].wrench, -found.force, rtol=2e-5, atol=2e-2)
+        held = 1.01 * found.held.max()  # the springs that hold floating rings act beside the law
+        np.testing.assert_allclose(results[name].wrench[:, :3], -found.force[:, :3], rtol=1e-9, atol=held + 1e-6)
         x, y = np.cos(found.place), np.sin(found.place)
         radial = found.load * np.cos(found.angle)
         np.testing.assert_allclose(radial @ x, found.force[:, 1], rtol=1e-6, atol=1e-3)
@@ -75,10 +76,14 @@ def test_balls_rollers_and_barrels_on_one_shaft():
 
 
 def test_a_case_comes_to_rest_as_it_does_alone():
-    together = fs.solve(mixed())
-    for name in together.cases:
-        alone = fs.solve(mixed().change({"rollers.radial_clearance": "20 um"}))
-        np.testing.assert_allclose(alone.case(name)["push"].u, together.case(name)["push"].u, rtol=1e-9, atol=1e-15)
+    whole = mixed()
+    together = fs.solve(whole)
+    for case in whole.cases:
+        alone = fs.solve(fs.Model("alone", whole.parts, [case], gravity="down"))
+        assert alone.cases == (case.name,)
+        np.testing.assert_allclose(
+            alone.case(case.name)["push"].u, together.case(case.name)["push"].u, rtol=1e-9, atol=1e-15
+        )
 
 
 @pytest.mark.parametrize("seed", range(12))

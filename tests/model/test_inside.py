@@ -3,6 +3,7 @@
 import pytest
 
 import fe_shaft as fs
+from fe_shaft.rolling import ball_geometry
 
 INSIDE = {"elements": 8, "element_diameter": "12.3 mm", "pitch_diameter": "51 mm"}
 BALLS = {"kind": "deep groove ball bearing", "geometry": INSIDE}
@@ -72,3 +73,8 @@ def test_there_and_back(tmp_path):
     assert bearing(**BALLS).slides
     assert not again["far"].slides
     assert isinstance(again.pinned()["near"], fs.Pin)
+
+
+def test_grooves_that_nobody_writes_are_those_of_the_law():
+    """0.52: ISO 76 and ISO 281, from memory; the model and the law's geometry do not know each other."""
+    assert fs.Groove().inner == fs.Groove().outer == ball_geometry.CONFORMITY
